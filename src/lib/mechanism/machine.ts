@@ -44,6 +44,8 @@ export interface Machine {
   readonly result: Readonly<Uint8Array>;
   readonly counter: Readonly<Uint8Array>;
   readonly slides: Readonly<Uint8Array>;
+  readonly carriage: number;
+  readonly reversed: boolean;
 }
 
 /** Below this many turns it is quicker to make them than to count them. */
@@ -176,6 +178,12 @@ export function createMachine(layout: Layout, options: MachineOptions = {}): Mac
     turn,
     get state() {
       return state();
+    },
+    get carriage() {
+      return carriage;
+    },
+    get reversed() {
+      return reversed;
     },
     result,
     counter,

@@ -1,5 +1,3 @@
-import { z } from 'zod';
-
 /** The states of a machine's life, in the order it passes through them. */
 export const MACHINE_STATES = [
   'being-built',
@@ -20,4 +18,7 @@ export const MACHINE_STATE_WORDS: Record<MachineState, string> = {
   'out-of-service': 'out of service',
 };
 
-export const machineStateSchema = z.enum(MACHINE_STATES);
+/** Most turns that a machine can have made before its log began: a turn a second for three centuries. */
+export const MOST_TURNS_BEFORE = 10_000_000_000;
+/** Most times its original's size that a build can be. */
+export const MOST_SCALE = 100;

@@ -48,7 +48,12 @@ function byRange(track: Track, excluded: ReadonlySet<number>): DigitSet[] {
     const [low, high] = ends(set);
     // What an excluded wheel does is not known: it may carry in any turn, or in none.
     if (excluded.has(wheel)) [fewest, most] = [-track.backward, track.forward];
-    else [fewest, most] = [Math.floor((low + net + fewest) / 10), Math.floor((high + net + most) / 10)];
+    else {
+      // A carry on top of a full round passes the edge once all the same; only an excluded wheel can make one.
+      const lost = excluded.has(wheel - 1) ? (track.rounds[wheel] ?? 0) : 0;
+      fewest = Math.max(-track.backward, Math.floor((low + net + fewest) / 10) - lost);
+      most = Math.min(track.forward, Math.floor((high + net + most) / 10));
+    }
   }
   return possible;
 }
@@ -135,14 +140,16 @@ function byCombination(track: Track, groups: readonly Reach[], excluded: Readonl
         next.add(out);
       }
     possible.push(digits);
-    carries = excluded.has(wheel) ? anyCarries(groups, wheel + 1) : next.list();
+    const overRound = excluded.has(wheel) && (track.rounds[wheel + 1] ?? 0) > 0;
+    carries = overRound ? null : excluded.has(wheel) ? anyCarries(groups, wheel + 1) : next.list();
   }
   return possible;
 }
 
 /**
  * The digits possible on a healthy machine at the end of a track, wheel 1 first. Exact, but for a track whose
- * carries changed their reach more often than can be followed: there a wheel may be given all ten digits.
+ * carries changed their reach more often than can be followed, or where an excluded wheel stands right below one
+ * that is driven a full round: there a wheel may be given digits too many, never too few.
  * `excluded` holds wheel indexes, 0 = wheel 1.
  */
 export function possibleDigits(track: Track, excluded: ReadonlySet<number>): DigitSet[] {

@@ -24,6 +24,8 @@ export interface Track {
   stretches: Stretch[] | null;
   /** Net steps driven, forward less backward. */
   net: Float64Array;
+  /** Turns in which a wheel was driven a full round of ten, as complement steps drive the lowest wheel. */
+  rounds: Float64Array;
   forward: number;
   backward: number;
   leastReach: number;
@@ -37,24 +39,25 @@ const ZERO = [0] as const;
 const ANY = digitsOf('?');
 
 export function createTrack(digits: Readonly<Uint8Array>): Track {
-  const track: Track = {
+  return {
     wheels: digits.length,
     sets: Array.from(digits, (digit) => [digit]),
     cleared: false,
     stretches: [],
     net: new Float64Array(digits.length),
+    rounds: new Float64Array(digits.length),
     forward: 0,
     backward: 0,
     leastReach: Number.POSITIVE_INFINITY,
     mostReach: -1,
   };
-  return track;
 }
 
 function restart(track: Track, cleared: boolean): void {
   track.cleared = cleared;
   track.stretches = [];
   track.net.fill(0);
+  track.rounds.fill(0);
   track.forward = 0;
   track.backward = 0;
   track.leastReach = Number.POSITIVE_INFINITY;
@@ -102,8 +105,10 @@ export function addTurns(
   if (backward) track.backward += turns;
   else track.forward += turns;
   for (let index = 0; index < amounts.length && from + index < track.wheels; index += 1) {
-    const steps = (amounts[index] ?? 0) * turns;
+    const amount = amounts[index] ?? 0;
+    const steps = amount * turns;
     const wheel = from + index;
+    if (amount === 10) track.rounds[wheel] = (track.rounds[wheel] ?? 0) + turns;
     if (stretch) stretch.moves[wheel] = (stretch.moves[wheel] ?? 0) + steps;
     track.net[wheel] = (track.net[wheel] ?? 0) + (backward ? -steps : steps);
   }

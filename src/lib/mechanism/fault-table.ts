@@ -16,8 +16,7 @@ export interface CarriageFault {
 
 /**
  * Faults laid out by place, so that a turn looks each place up once whatever the length of the list. Rates stand
- * at index 0 = wheel 1; 0 means that there is no such fault. Two faults of one kind at one place are one cause
- * with the higher rate.
+ * at index 0 = wheel 1; 0 means that there is no such fault.
  */
 export interface FaultTable {
   /** Whether any fault acts only sometimes, so that turns cannot be counted ahead. */
@@ -77,7 +76,12 @@ function emptyTable(layout: Layout): Draft {
 }
 
 function raise(rates: Float64Array, place: number, rate: number): void {
-  rates[place - 1] = Math.max(rates[place - 1] ?? 0, rate);
+  rates[place - 1] = rate;
+}
+
+/** Behind the stuck ones before it, so that the last one listed has its way, and ahead of those that are off. */
+function enterStuck(slide: SlideFault[], fault: SlideFault): void {
+  slide.splice(slide.filter(({ at }) => at !== null).length, 0, fault);
 }
 
 function enter(table: Draft, fault: Fault): void {
@@ -99,7 +103,7 @@ function enter(table: Draft, fault: Fault): void {
       raise(table.seized, fault.wheel, rate);
       return;
     case 'slide-stuck':
-      table.slides[fault.slide - 1]?.unshift({ rate, at: fault.at, by: 0 });
+      enterStuck(table.slides[fault.slide - 1] ?? [], { rate, at: fault.at, by: 0 });
       return;
     case 'slide-off':
       table.slides[fault.slide - 1]?.push({ rate, at: null, by: fault.by });
@@ -117,10 +121,10 @@ function enter(table: Draft, fault: Fault): void {
       raise(table.counterCarryMissed, fault.wheel, rate);
       return;
     case 'reverse-dead':
-      table.reverseDead = Math.max(table.reverseDead, rate);
+      table.reverseDead = rate;
       return;
     case 'counter-inverted':
-      table.counterInverted = Math.max(table.counterInverted, rate);
+      table.counterInverted = rate;
       return;
     case 'carriage-off':
       table.carriage[fault.position - 1]?.push({ rate, by: fault.by });
@@ -130,8 +134,20 @@ function enter(table: Draft, fault: Fault): void {
 
 const DRIVE_KINDS: readonly Fault['kind'][] = ['slide-stuck', 'slide-off', 'tooth-short', 'carriage-off'];
 
+/** One cause listed twice is still one cause: the higher rate stands. */
+function distinct(faults: readonly Fault[]): Fault[] {
+  const known = new Map<string, Fault>();
+  for (const fault of faults) {
+    const { rate = 1, ...place } = fault;
+    const key = JSON.stringify(place, Object.keys(place).sort());
+    if ((known.get(key)?.rate ?? 0) <= rate) known.set(key, { ...fault, rate });
+  }
+  return [...known.values()];
+}
+
 /** Lays accepted faults out by place. */
-export function tableOf(layout: Layout, faults: readonly Fault[]): FaultTable {
+export function tableOf(layout: Layout, listed: readonly Fault[]): FaultTable {
+  const faults = distinct(listed);
   const table = emptyTable(layout);
   for (const fault of faults) enter(table, fault);
   const sometimes = faults.filter(({ rate }) => rate !== undefined && rate > 0 && rate < 1);

@@ -131,7 +131,7 @@ function isFaulty(wheel: LadderWheel): boolean {
 }
 
 /** The lowest faulty wheel of a reading, the result before the counter, causes before what follows from them. */
-function firstFaultOf(reading: JudgedReading): Comparison['firstFault'] {
+export function firstFaultOf(reading: JudgedReading): Comparison['firstFault'] {
   const faulty = REGISTERS.flatMap((register) =>
     reading[register].filter(isFaulty).map(({ wheel, follows }) => ({ register, wheel, follows })),
   );

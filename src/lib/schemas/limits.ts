@@ -4,6 +4,17 @@ export const LIMITS = {
   callBytes: 1024 * 1024,
   /** Steps of one call. */
   callSteps: 10_000,
+  /** Points that one address may spend in a minute on calls without an account; what a call costs grows with its work. */
+  callPoints: 600,
+  /** Steps, and turns with faults, that cost one point more. */
+  callPointSteps: 500,
+  callPointTurns: 200_000,
+  callPointChanceTurns: 20_000,
+  /** Turns of one call with faults: they may have to be made one by one. A healthy machine's turns are counted instead. */
+  callTurns: 20_000_000,
+  /** The same where a fault acts only sometimes, which takes a draw for every fault and turn. */
+  callChanceTurns: 2_000_000,
+  callDraws: 20_000_000,
   /** Bytes and rows of one imported file. */
   importBytes: 1024 * 1024,
   importRows: 10_000,

@@ -114,13 +114,29 @@ export async function readJson<T extends z.ZodType>(
     });
   }
   const parsed = schema.safeParse(value);
-  if (!parsed.success)
-    throw new Refusal(400, { detail: 'Some fields are not as expected.', errors: parsed.error.issues.map(badInput) });
+  if (!parsed.success) refuseInput(parsed.error.issues.flatMap(badInputs));
   return parsed.data;
 }
 
-function badInput(issue: z.core.$ZodIssue): BadInput {
-  return { pointer: pointerTo(issue.path), detail: issue.message };
+/** Most mistakes told in one answer; a body of ten thousand bad steps need not be repeated in full. */
+const MOST_ERRORS = 100;
+
+/** Refuses a body with 400 and what is wrong where. */
+export function refuseInput(errors: readonly BadInput[]): never {
+  const more = errors.length > MOST_ERRORS ? ` The first ${MOST_ERRORS} of ${errors.length} are listed.` : '';
+  throw new Refusal(400, {
+    detail: `Some fields are not as expected.${more}`,
+    errors: errors.slice(0, MOST_ERRORS),
+  });
+}
+
+/** What a schema found wrong, as pointers and words; each unknown field has a pointer of its own. */
+export function badInputs(issue: z.core.$ZodIssue): BadInput[] {
+  if (issue.code !== 'unrecognized_keys') return [{ pointer: pointerTo(issue.path), detail: issue.message }];
+  return issue.keys.map((key) => ({
+    pointer: pointerTo([...issue.path, key]),
+    detail: 'This field is not known here; take it out or check its spelling.',
+  }));
 }
 
 /** JSON Pointer (RFC 6901) of a path. */

@@ -7,8 +7,7 @@ import { exclusion } from '../db/schema/machines';
 import { person } from '../db/schema/people';
 import type { RunExclusion } from '../db/schema/runs';
 import { uniqueViolation } from '../db/violations';
-import { refuseInput } from '../doors';
-import { notFound, Refusal } from '../http';
+import { notFound, Refusal, refuseInput } from '../http';
 import type { Insider } from './insider';
 import { holdMachine, idFrom } from './machines';
 

@@ -8,8 +8,8 @@ import type { Tx } from '../db/client';
 import { exclusion, machine, machineLayout } from '../db/schema/machines';
 import { run } from '../db/schema/runs';
 import { uniqueViolation } from '../db/violations';
-import { admitted, refuseInput } from '../doors';
-import { Refusal } from '../http';
+import { admitted } from '../doors';
+import { Refusal, refuseInput } from '../http';
 import type { Insider } from './insider';
 import { type HeldMachine, holdMachine } from './machines';
 

@@ -113,6 +113,14 @@ export const newExclusionSchema = z
   });
 export type NewExclusion = z.infer<typeof newExclusionSchema>;
 
+/** The one change that an exclusion can have. */
+export const exclusionEndSchema = z
+  .strictObject(
+    { ended: z.literal(true, { error: 'Give true; an exclusion that has ended is not taken up again.' }) },
+    { error: 'Give an object.' },
+  )
+  .meta({ id: 'ExclusionEnd', description: 'Ends an exclusion: the wheel counts again from now on.' });
+
 export const exclusionSchema = z
   .object({
     id: z.uuid(),

@@ -1,7 +1,6 @@
 import { and, asc, count, desc, eq, isNull, sql } from 'drizzle-orm';
 import { validate } from 'uuid';
-import type { Layout } from '@/lib/mechanism/layout';
-import { acceptLayout } from '@/lib/mechanism/layout';
+import { acceptLayout, type Layout } from '@/lib/mechanism/layout';
 import { layoutFields } from '@/lib/schemas/layout';
 import type { LayoutRevision, MachineShown, MachineSummary, RunResult } from '@/lib/schemas/machine-shapes';
 import type { Tx } from '../db/client';
@@ -133,6 +132,11 @@ export async function machineNames(tx: Tx, { workshop }: Insider): Promise<{ id:
     .from(machine)
     .where(eq(machine.workshopId, workshop.id))
     .orderBy(asc(sql`lower(${machine.name})`));
+}
+
+/** The entity tag of a machine: its version, as `If-Match` takes it. */
+export function versionTag({ version }: Pick<MachineSummary, 'version'>): string {
+  return `"${version}"`;
 }
 
 async function revisionsOf(tx: Tx, workshop: string, machineId: string): Promise<LayoutRevision[]> {

@@ -212,6 +212,25 @@ export function acceptSeed(seed: unknown, faults: readonly Fault[], at: Path = [
     : { ok: false, problems };
 }
 
+/**
+ * Most turns in a run whose faults act only sometimes. Such turns must be made one by one, where all others are
+ * counted: this many take a few seconds.
+ */
+export const MOST_TURNS_OF_CHANCE = 5_000_000;
+
+/** Refuses a run by chance that would keep a server busy for minutes. */
+function acceptTurns(steps: readonly Step[], faults: readonly Fault[]): Result<null> {
+  if (!needsSeed(faults)) return accept(null);
+  const turns = steps.reduce((sum, step) => sum + (step.do === 'turn' ? (step.times ?? 1) : 0), 0);
+  const problem = {
+    code: 'too-many',
+    path: ['steps'],
+    expected: `${MOST_TURNS_OF_CHANCE}`,
+    found: `${turns}`,
+  } as const;
+  return ended(turns > MOST_TURNS_OF_CHANCE ? [problem] : [], null);
+}
+
 /** All the doors in one: what simulation and comparison run on. */
 export function acceptRun(layout: Layout, run: RunDescription): Result<AcceptedRun> {
   const start = acceptStart(layout, run.start);
@@ -219,7 +238,8 @@ export function acceptRun(layout: Layout, run: RunDescription): Result<AcceptedR
   const steps = acceptSteps(layout, run.steps);
   const excluded = acceptExcluded(layout, run.excluded);
   const seed = acceptSeed(run.seed, faults.ok ? faults.value : []);
-  if (start.ok && faults.ok && steps.ok && excluded.ok && seed.ok)
+  const turns = acceptTurns(steps.ok ? steps.value : [], faults.ok ? faults.value : []);
+  if (start.ok && faults.ok && steps.ok && excluded.ok && seed.ok && turns.ok)
     return accept({
       layout,
       start: start.value,
@@ -230,6 +250,6 @@ export function acceptRun(layout: Layout, run: RunDescription): Result<AcceptedR
     });
   return {
     ok: false,
-    problems: [start, faults, steps, excluded, seed].flatMap((door) => (door.ok ? [] : door.problems)),
+    problems: [start, faults, steps, excluded, seed, turns].flatMap((door) => (door.ok ? [] : door.problems)),
   };
 }

@@ -5,7 +5,7 @@ import type { CounterTurn, TurnMarks } from './turn';
 /**
  * Many equal turns at once, by counting instead of turning. A wheel that makes at most ten steps a turn passes
  * 9→0 at most once a turn, so after t turns it has passed floor((digit + steps) / 10) times, and that many times
- * it has raised the next lever: every wheel follows from the one below it, at any t, without the turns between.
+ * it has raised the next lever; one that makes more passes every turn: every wheel follows from the one below it, at any t, without the turns between.
  * All counts stay far below 2^53; no register is ever one number.
  */
 interface Wheel {
@@ -44,9 +44,14 @@ function countTo(wheels: readonly Wheel[], last: number, turns: number): { carri
     if (wheel.missed) carries = 0;
     else if (wheel.heldSince !== null) carries = Math.max(0, turns - wheel.heldSince + 1);
     else carries = wheel.reached ? passes : 0;
-    passes = wheel.seized ? 0 : Math.floor((wheel.start + wheel.steps * turns + carries) / 10);
+    passes = wheel.seized ? 0 : passesOf(wheel, turns, carries);
   }
   return { carries, passes };
+}
+
+/** A wheel driven a full round or more passes its edge every turn, and raises the lever once for it. */
+function passesOf(wheel: Wheel, turns: number, carries: number): number {
+  return wheel.steps >= 10 ? turns : Math.floor((wheel.start + wheel.steps * turns + carries) / 10);
 }
 
 /** The first turn, up to `turns`, in which the wheel below passes its edge; Infinity when it does not. */
@@ -61,17 +66,14 @@ function firstPass(wheels: readonly Wheel[], below: number, turns: number): numb
   return from;
 }
 
-/**
- * Moves the result register by `turns` equal turns of a machine whose faults, if any, always act. Returns false
- * and moves nothing where some wheel could make more than ten steps in a turn: then the turns must be made.
- */
+/** Moves the result register by `turns` equal turns of a machine whose faults, if any, always act. */
 export function spinResult(
   digits: Uint8Array,
   drive: Drive,
   marks: TurnMarks,
   turns: number,
   table: FaultTable | null,
-): boolean {
+): void {
   const wheels: Wheel[] = [];
   const after: number[] = [];
   let levers = 0;
@@ -85,7 +87,6 @@ export function spinResult(
       if (wheel.heldSince <= turns) levers |= 1 << index;
     }
     const count = countTo(wheels, index, turns);
-    if (!wheel.seized && wheel.steps + (count.carries > 0 ? 1 : 0) > 10) return false;
     const moved = wheel.seized ? 0 : wheel.steps * turns + count.carries;
     const stop = (wheel.start + moved) % 10;
     after.push(drive.backward ? 9 - stop : stop);
@@ -94,7 +95,6 @@ export function spinResult(
   digits.set(after);
   marks.levers = levers;
   marks.overflow = passes > 0;
-  return true;
 }
 
 /** Moves the counter by `turns` equal turns of a machine whose faults, if any, always act. */

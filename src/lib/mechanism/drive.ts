@@ -1,4 +1,4 @@
-import type { FaultTable, SlideFault } from './fault-table';
+import type { FaultTable, SlideFault, ToothFault } from './fault-table';
 import type { Layout } from './layout';
 import type { Chance } from './random';
 import type { Way } from './steps';
@@ -65,12 +65,14 @@ function drivenAs(set: number, faults: readonly SlideFault[], chance: Chance): n
   return digit;
 }
 
-function bitten(amount: number, teeth: Float64Array, chance: Chance): number {
+function bitten(amount: number, teeth: readonly ToothFault[], chance: Chance): number {
   let left = amount;
   // From tooth 1 up, each judged on what the ones before it left over.
-  for (let tooth = 1; tooth <= left; tooth += 1) if (chance.happens(teeth[tooth - 1] ?? 0)) left -= 1;
+  for (const { tooth, rate } of teeth) if (tooth <= left && chance.happens(rate)) left -= 1;
   return left;
 }
+
+const SOUND: readonly SlideFault[] = [];
 
 /** Like `driveHealthy`, with the faults of slides, drum and carriage, each acting as chance has it. */
 export function driveFaulty(
@@ -91,7 +93,7 @@ export function driveFaulty(
   const above = Math.min(layout.resultWheels, from + columns(layout, complement));
   for (let wheel = Math.max(0, from); wheel < above; wheel += 1) {
     const column = wheel - from;
-    const digit = drivenAs(slides[column] ?? 0, table.slides[column] ?? [], chance);
+    const digit = drivenAs(slides[column] ?? 0, table.slides[column] ?? SOUND, chance);
     drive.amounts[wheel] = bitten(complement ? 9 - digit : digit, teeth, chance);
   }
   if (complement && from >= 0 && from < above) drive.amounts[from] = (drive.amounts[from] ?? 0) + 1;

@@ -9,6 +9,11 @@ export interface SlideFault {
   readonly by: number;
 }
 
+export interface ToothFault {
+  readonly tooth: number;
+  readonly rate: number;
+}
+
 export interface CarriageFault {
   readonly rate: number;
   readonly by: number;
@@ -30,11 +35,10 @@ export interface FaultTable {
   readonly seized: Float64Array;
   /** Stuck before off, as they act. */
   readonly slides: readonly (readonly SlideFault[])[];
-  /** Index 0 = tooth 1. */
-  readonly teeth: {
-    readonly add: Float64Array;
-    readonly subtract: Float64Array;
-  };
+  /** From tooth 1 up. */
+  readonly teeth: { readonly add: readonly ToothFault[]; readonly subtract: readonly ToothFault[] };
+  /** Result wheels at which any fault sits, as bits: the others turn without asking. */
+  readonly touched: number;
   readonly clear: {
     readonly result: Float64Array;
     readonly counter: Float64Array;
@@ -48,6 +52,7 @@ export interface FaultTable {
 
 interface Draft extends FaultTable {
   slides: SlideFault[][];
+  teeth: { add: ToothFault[]; subtract: ToothFault[] };
   carriage: CarriageFault[][];
   reverseDead: number;
   counterInverted: number;
@@ -65,7 +70,8 @@ function emptyTable(layout: Layout): Draft {
     over: wheels(),
     seized: wheels(),
     slides: Array.from({ length: layout.settingSlides }, () => []),
-    teeth: { add: new Float64Array(9), subtract: new Float64Array(9) },
+    teeth: { add: [], subtract: [] },
+    touched: 0,
     clear: { result: wheels(), counter: counters() },
     counterMissed: counters(),
     counterCarryMissed: counters(),
@@ -109,7 +115,8 @@ function enter(table: Draft, fault: Fault): void {
       table.slides[fault.slide - 1]?.push({ rate, at: null, by: fault.by });
       return;
     case 'tooth-short':
-      raise(table.teeth[fault.drum], fault.tooth, rate);
+      table.teeth[fault.drum].push({ tooth: fault.tooth, rate });
+      table.teeth[fault.drum].sort((a, b) => a.tooth - b.tooth);
       return;
     case 'clear-missed':
       raise(table.clear[fault.register], fault.wheel, rate);
@@ -130,6 +137,14 @@ function enter(table: Draft, fault: Fault): void {
       table.carriage[fault.position - 1]?.push({ rate, by: fault.by });
       return;
   }
+}
+
+function touchedWheels(table: FaultTable): number {
+  const rates = [table.missed, table.held, table.short, table.over, table.seized];
+  return table.missed.reduce((bits, _, wheel) => {
+    const any = rates.some((each) => (each[wheel] ?? 0) > 0);
+    return any ? bits | (1 << wheel) : bits;
+  }, 0);
 }
 
 const DRIVE_KINDS: readonly Fault['kind'][] = ['slide-stuck', 'slide-off', 'tooth-short', 'carriage-off'];
@@ -153,6 +168,7 @@ export function tableOf(layout: Layout, listed: readonly Fault[]): FaultTable {
   const sometimes = faults.filter(({ rate }) => rate !== undefined && rate > 0 && rate < 1);
   return {
     ...table,
+    touched: touchedWheels(table),
     random: sometimes.length > 0,
     randomDrive: sometimes.some(({ kind }) => DRIVE_KINDS.includes(kind)),
   };

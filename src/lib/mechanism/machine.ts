@@ -1,12 +1,13 @@
-import { spinCounter, spinResult } from './batch';
+import { spinCounter } from './batch';
 import { createDrive, driveFaulty, driveHealthy } from './drive';
 import { tableOf } from './fault-table';
 import type { Fault } from './faults';
 import type { Layout } from './layout';
 import { type Chance, chanceFromSeed } from './random';
 import { readDigits, writeDigits } from './registers';
+import { createResultRegister } from './result-register';
 import type { Clearable, Operation, Register, Start, Way } from './steps';
-import { type CounterTurn, type TurnMarks, turnCounter, turnFaulty, turnHealthy } from './turn';
+import { type CounterTurn, type TurnMarks, turnCounter } from './turn';
 
 /** How a machine stands after an operation. Registers and slides are written highest first. */
 export interface MachineState {
@@ -36,8 +37,10 @@ export interface Machine {
   apply(operation: Operation): MachineState;
   /** Does one operation without writing the state out. */
   advance(operation: Operation): void;
-  /** One crank turn; answers with the result wheels that received a carry as bits, bit 0 = wheel 1. */
-  turn(way: Way): number;
+  /** One crank turn. */
+  turn(way: Way): void;
+  /** Result wheels that received a carry in the last turn, as bits, bit 0 = wheel 1. */
+  readonly carryBits: number;
   /** How the machine stands now. */
   readonly state: MachineState;
   /** The wheels themselves, wheel 1 first: to look at, not to move. */
@@ -67,13 +70,19 @@ function wheelsOf(bits: number): number[] {
 
 /** A machine with its faults, if any, as it stands before the first operation: slides at zero, carriage at 1. */
 export function createMachine(layout: Layout, options: MachineOptions = {}): Machine {
-  const result = acceptedDigits(options.start?.result, layout.resultWheels);
   const counter = acceptedDigits(options.start?.counter, layout.counterWheels);
   const table = options.faults && options.faults.length > 0 ? tableOf(layout, options.faults) : null;
   const chance: Chance = chanceFromSeed(options.seed ?? 0);
   const slides = new Uint8Array(layout.settingSlides);
   const drive = createDrive(layout);
   const marks: TurnMarks = { made: 0, overflow: false, levers: 0 };
+  const result = createResultRegister(
+    acceptedDigits(options.start?.result, layout.resultWheels),
+    drive,
+    marks,
+    table && { table, chance },
+    layout.resultCarry === null,
+  );
   let carriage = 1;
   let reversed = false;
   /** The way the drive was last worked out for; null when slides or carriage have moved since. */
@@ -83,6 +92,7 @@ export function createMachine(layout: Layout, options: MachineOptions = {}): Mac
   const prepare = (way: Way): void => {
     if (driven === way && !table?.randomDrive) return;
     if (way === 'subtract' && layout.subtraction === 'none') throw new Error('This layout does not subtract');
+    result.redriven();
     if (table) driveFaulty(drive, layout, slides, carriage, way, table, chance);
     else driveHealthy(drive, layout, slides, carriage, way);
     driven = way;
@@ -95,13 +105,11 @@ export function createMachine(layout: Layout, options: MachineOptions = {}): Mac
     return { wheel: carriage - 1, backward, carries: layout.counterCarry };
   };
 
-  const turn = (way: Way): number => {
+  const turn = (way: Way): void => {
     prepare(way);
-    if (table) turnFaulty(result, drive, marks, table, chance);
-    else turnHealthy(result, drive, marks);
+    result.turn();
     if (counter.length > 0) turnCounter(counter, counting(way), table, chance);
     overflow = marks.overflow;
-    return marks.made;
   };
 
   const turnMany = (way: Way, times: number): void => {
@@ -110,11 +118,10 @@ export function createMachine(layout: Layout, options: MachineOptions = {}): Mac
     if (times >= FEW_TURNS && !table?.random) {
       prepare(way);
       // The last turn is made, not counted: it tells which wheels received a carry.
-      if (spinResult(result, drive, marks, times - 1, table)) {
-        spinCounter(counter, counting(way), times - 1, table);
-        ever = marks.overflow;
-        left = 1;
-      }
+      result.spin(times - 1);
+      spinCounter(counter, counting(way), times - 1, table);
+      ever = marks.overflow;
+      left = 1;
     }
     for (; left > 0; left -= 1) {
       turn(way);
@@ -131,12 +138,15 @@ export function createMachine(layout: Layout, options: MachineOptions = {}): Mac
   };
 
   const clear = (what: Clearable): void => {
-    if (what !== 'counter') clearWheels('result', result);
+    if (what !== 'counter') {
+      clearWheels('result', result.digits);
+      result.moved();
+    }
     if (what !== 'result') clearWheels('counter', counter);
   };
 
   const advance = (operation: Operation): void => {
-    marks.made = 0;
+    result.forgetCarries();
     overflow = false;
     switch (operation.do) {
       case 'set':
@@ -160,13 +170,13 @@ export function createMachine(layout: Layout, options: MachineOptions = {}): Mac
   };
 
   const state = (): MachineState => ({
-    result: writeDigits(result),
+    result: writeDigits(result.digits),
     counter: writeDigits(counter),
     slides: writeDigits(slides),
     carriage,
     reversed,
     overflow,
-    carries: wheelsOf(marks.made),
+    carries: wheelsOf(result.carries),
   });
 
   return {
@@ -176,6 +186,9 @@ export function createMachine(layout: Layout, options: MachineOptions = {}): Mac
     },
     advance,
     turn,
+    get carryBits() {
+      return result.carries;
+    },
     get state() {
       return state();
     },
@@ -185,7 +198,9 @@ export function createMachine(layout: Layout, options: MachineOptions = {}): Mac
     get reversed() {
       return reversed;
     },
-    result,
+    get result() {
+      return result.digits;
+    },
     counter,
     slides,
   };

@@ -13,26 +13,18 @@ export interface TurnMarks {
   levers: number;
 }
 
-/** One turn of a healthy machine, wheel by wheel from the lowest. */
+/** One turn of a healthy machine, wheel by wheel from the lowest that is driven. */
 export function turnHealthy(digits: Uint8Array, drive: Drive, marks: TurnMarks): void {
   const { amounts, reach, backward } = drive;
-  const wheels = digits.length;
   let made = 0;
   let lever = 0;
-  let wheel = drive.from;
-  for (; wheel < wheels; wheel += 1) {
-    if (lever !== 0 && wheel > reach) lever = 0;
-    if (lever !== 0) made |= 1 << wheel;
+  for (let wheel = drive.from; wheel < digits.length; wheel += 1) {
+    if (wheel > reach) lever = 0;
+    made |= lever << wheel;
     const motion = (amounts[wheel] as number) + lever;
-    if (backward) {
-      const left = (digits[wheel] as number) - motion;
-      lever = left < 0 ? 1 : 0;
-      digits[wheel] = left + lever * 10;
-    } else {
-      const sum = (digits[wheel] as number) + motion;
-      lever = sum > 9 ? 1 : 0;
-      digits[wheel] = sum - lever * 10;
-    }
+    const stop = (digits[wheel] as number) + (backward ? -motion : motion);
+    lever = stop < 0 || stop > 9 ? 1 : 0;
+    digits[wheel] = (stop + 10) % 10;
   }
   marks.made = made;
   marks.overflow = lever !== 0;
@@ -63,20 +55,21 @@ export function turnFaulty(
   let passed = false;
   for (let wheel = 0; wheel < wheels; wheel += 1) {
     const bit = 1 << wheel;
-    if (passed && wheel <= reach) levers |= bit;
-    if ((levers & bit) !== 0 && chance.happens(table.missed[wheel] as number)) levers &= ~bit;
-    const up = (levers & bit) !== 0;
     const amount = amounts[wheel] as number;
+    const sound = (table.touched & bit) === 0;
+    if (passed && wheel <= reach) levers |= bit;
+    if (!sound && (levers & bit) !== 0 && chance.happens(table.missed[wheel] as number)) levers &= ~bit;
+    const up = (levers & bit) !== 0;
     passed = false;
-    if ((amount > 0 || up) && !chance.happens(table.seized[wheel] as number)) {
+    if ((amount > 0 || up) && (sound || !chance.happens(table.seized[wheel] as number))) {
       if (up) made |= bit;
-      const motion = amount + (up ? 1 : 0) + (amount > 0 ? slip(wheel, table, chance) : 0);
-      const at = digits[wheel] as number;
-      const stop = backward ? at - motion : at + motion;
+      const slipped = sound || amount === 0 ? 0 : slip(wheel, table, chance);
+      const motion = amount + (up ? 1 : 0) + slipped;
+      const stop = (digits[wheel] as number) + (backward ? -motion : motion);
       passed = stop < 0 || stop > 9;
       digits[wheel] = (stop + 20) % 10;
     }
-    if (up && !chance.happens(table.held[wheel] as number)) levers &= ~bit;
+    if (up && (sound || !chance.happens(table.held[wheel] as number))) levers &= ~bit;
   }
   marks.made = made;
   marks.overflow = passed;

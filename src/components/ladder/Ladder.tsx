@@ -1,0 +1,151 @@
+import './ladder.css';
+import {
+  type KeyboardEvent,
+  type MouseEvent,
+  type ReactElement,
+  useCallback,
+  useEffect,
+  useId,
+  useMemo,
+  useRef,
+  useState,
+} from 'react';
+import type { Place } from '@/lib/comparison/compare';
+import type { Layout } from '@/lib/mechanism/layout';
+import { FaultBar } from './FaultBar';
+import { LadderDetail } from './LadderDetail';
+import { LadderHead } from './LadderHead';
+import { LadderLine } from './LadderLine';
+import { Legend } from './Legend';
+import { moveFor } from './moves';
+import type { LadderRow } from './rows';
+import { type Density, useRowsWindow } from './use-rows-window';
+import { operationSentence, readingSentences } from './words';
+
+export interface LadderProps {
+  readonly layout: Layout;
+  readonly rows: readonly LadderRow[];
+  /** Wheels left out of the judgement; their columns are dotted. */
+  readonly excluded?: readonly Place[];
+  /** Rows are still being added: the newest one is kept in sight, opened and read out. */
+  readonly live?: boolean;
+  /** `bench` is readable at arm's length and fills the height it is given; `desk` is for reading at a table. */
+  readonly density?: Density;
+  readonly label?: string;
+  readonly legend?: 'open' | 'closed' | 'none';
+  /** Told when a row is opened. */
+  readonly onPick?: (row: LadderRow) => void;
+}
+
+/** Sizes that the columns are fitted for, by number of result wheels; `ladder.css` has one rule for each. */
+function sizeFor(wheels: number): 's' | 'm' | 'l' | 'xl' {
+  if (wheels <= 9) return 's';
+  if (wheels <= 12) return 'm';
+  return wheels <= 16 ? 'l' : 'xl';
+}
+
+function spoken(row: LadderRow): string {
+  const said = row.judged ? readingSentences(row.judged).join(' ') : 'No reading.';
+  return `Turn ${row.seq}, ${operationSentence(row.operation)}. ${said}`;
+}
+
+function Space({ height, columns }: { height: number; columns: number }): ReactElement | null {
+  // The height is an attribute, not a style: the page's policy lets no inline style through.
+  return height > 0 ? (
+    // biome-ignore lint/a11y/noAriaHiddenOnFocusable: nothing in it takes the focus; it only holds rows out of sight.
+    <tr className="space" aria-hidden="true">
+      <td colSpan={columns} height={height} />
+    </tr>
+  ) : null;
+}
+
+/**
+ * Rows of turns by columns of wheels: the product's face, used wherever a run is looked at. A real table, of which
+ * only the rows in sight are drawn; arrows, Home, End, N, P, Enter and Escape move in it.
+ */
+export function Ladder(props: LadderProps): ReactElement {
+  const { layout, rows, excluded = [], live = false, density = 'desk', legend = 'closed', onPick } = props;
+  const { label = 'The ladder: turns by wheels' } = props;
+  const frame = useRef<HTMLElement>(null);
+  const detailId = useId();
+  const [picked, setPicked] = useState<number | null>(null);
+  const { virtualizer, items, above, below } = useRowsWindow(frame, rows, density);
+  const faults = useMemo(() => rows.flatMap(({ faults: count }, index) => (count > 0 ? [index] : [])), [rows]);
+  const last = rows.length - 1;
+  const active = picked !== null && picked <= last ? picked : live && last >= 0 ? last : null;
+  const row = active === null ? null : (rows[active] ?? null);
+  const columns = layout.resultWheels + layout.counterWheels + (layout.counterWheels > 0 ? 3 : 2);
+
+  const pick = useCallback(
+    (index: number | null) => {
+      setPicked(index);
+      if (index === null) return;
+      virtualizer.scrollToIndex(index, { align: 'auto' });
+      const chosen = rows[index];
+      if (chosen) onPick?.(chosen);
+    },
+    [virtualizer, rows, onPick],
+  );
+
+  useEffect(() => {
+    if (!live || last < 0) return;
+    setPicked(null);
+    virtualizer.scrollToIndex(last, { align: 'end' });
+  }, [live, last, virtualizer]);
+
+  const onKeyDown = (event: KeyboardEvent): void => {
+    const move = moveFor(event, { active, last, faults });
+    if (move === undefined) return;
+    event.preventDefault();
+    pick(move);
+  };
+  const onClick = (event: MouseEvent): void => {
+    const line = event.target instanceof Element ? event.target.closest('tr[data-index]') : null;
+    if (line instanceof HTMLElement) pick(Number(line.dataset.index));
+  };
+
+  return (
+    <div className="grid min-h-0">
+      {faults.length > 0 && <FaultBar rows={rows} faults={faults} active={active} onPick={pick} />}
+      <div className="ladder-frame min-h-0">
+        {/* biome-ignore lint/a11y/noNoninteractiveElementInteractions: a scrolling frame is reached by keyboard, and its keys are listed under "Marks and keys". */}
+        <section
+          ref={frame}
+          className="ladder"
+          data-density={density}
+          data-size={sizeFor(layout.resultWheels)}
+          // biome-ignore lint/a11y/noNoninteractiveTabindex: as above.
+          tabIndex={0}
+          aria-label={label}
+          onKeyDown={onKeyDown}
+          onClick={onClick}
+        >
+          <table aria-rowcount={rows.length + 2}>
+            <LadderHead layout={layout} excluded={excluded} />
+            <tbody>
+              <Space height={above} columns={columns} />
+              {items.map(({ index }) => {
+                const line = rows[index];
+                return line ? (
+                  <LadderLine key={line.seq} layout={layout} row={line} index={index} active={index === active} />
+                ) : null;
+              })}
+              <Space height={below} columns={columns} />
+            </tbody>
+          </table>
+        </section>
+      </div>
+      <div className="border border-t-0 border-ink bg-leaf">
+        {row && (
+          <section id={detailId} aria-label={`Turn ${row.seq} in detail`} className="print:hidden">
+            <LadderDetail row={row} />
+          </section>
+        )}
+        {legend !== 'none' && <Legend open={legend === 'open'} />}
+      </div>
+      <p className="sr-only" role="status">
+        {row ? spoken(row) : ''}
+      </p>
+    </div>
+  );
+}

@@ -7,7 +7,7 @@ export type Path = readonly (string | number)[];
 export type Plain = Readonly<Record<string, unknown>>;
 
 /** How a value of the wrong kind is quoted back: short, and never by running code of its own. */
-function quoted(value: unknown): string {
+export function quoted(value: unknown): string {
   if (typeof value === 'string') return value.slice(0, 60);
   if (typeof value === 'number' || typeof value === 'boolean' || typeof value === 'bigint') return String(value);
   return value === null ? 'null' : Array.isArray(value) ? 'a list' : typeof value;

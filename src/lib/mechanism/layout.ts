@@ -1,3 +1,4 @@
+import { quoted } from './description';
 import { accept, type Problem, type Result } from './result';
 
 export const SUBTRACTIONS = ['complement', 'reverse', 'none'] as const;
@@ -45,7 +46,7 @@ export interface Layout {
 export function acceptLayout(description: LayoutDescription): Result<Layout> {
   const problems: Problem[] = [];
   const count = (field: string, value: number, from: number, to: number): number => {
-    if (!Number.isInteger(value)) problems.push({ code: 'not-a-whole-number', path: [field], found: String(value) });
+    if (!Number.isInteger(value)) problems.push({ code: 'not-a-whole-number', path: [field], found: quoted(value) });
     else if (value < from || value > to)
       problems.push({ code: 'out-of-range', path: [field], expected: `${from} to ${to}`, found: String(value) });
     return value;
@@ -64,7 +65,15 @@ export function acceptLayout(description: LayoutDescription): Result<Layout> {
       code: 'not-one-of',
       path: ['subtraction'],
       expected: SUBTRACTIONS.join(', '),
-      found: String(subtraction),
+      found: quoted(subtraction),
+    });
+  const counterCarry = description.counterCarry ?? true;
+  if (typeof counterCarry !== 'boolean')
+    problems.push({
+      code: 'not-one-of',
+      path: ['counterCarry'],
+      expected: 'true, false',
+      found: quoted(counterCarry),
     });
   const layout = {
     settingSlides: named('settingSlides'),
@@ -74,7 +83,7 @@ export function acceptLayout(description: LayoutDescription): Result<Layout> {
     subtraction,
     complementColumns: reach('complementColumns', 1),
     resultCarry: reach('resultCarry', 0),
-    counterCarry: description.counterCarry ?? true,
+    counterCarry,
   };
   // The only cast into the accepted type: everything above has been checked.
   return problems.length > 0 ? { ok: false, problems } : accept(layout as unknown as Layout);

@@ -8,5 +8,9 @@ declare namespace App {
     signedIn: import('@/lib/server/auth/guard').SignedIn | null;
     /** The theme the visitor chose; `auto` follows the device. */
     theme: import('@/lib/theme').Theme;
+    /** What the form before this page did. */
+    flash: import('@/lib/server/flash').Flash | null;
+    /** Why a page was refused, for the page that says so. */
+    refusal?: { readonly status: number; readonly text: string };
   }
 }

@@ -30,7 +30,7 @@ export function stepsBetween(from: number, to: number): number {
   return steps > 5 ? steps - 10 : steps;
 }
 
-/** Whether a number can be reached from at least one pair; ranges are wide only where little is known. */
+/** Counts of carries tried one by one: after ten, the same digits come again. */
 const MOST_TRIED = 10;
 
 /** The net steps that a wheel was driven by the end of each stretch, without carries. */
@@ -42,12 +42,13 @@ export function drivenBy(stretches: readonly Stretch[], wheel: number): number[]
   });
 }
 
-/** Turns from here to there as a range of sums; `passes` are those sums in tens. */
-interface Motion {
+/** Lowest and highest of a count of steps or of passes. */
+interface Span {
   low: number;
   high: number;
 }
 
+/** How often the edge has been passed at a sum of steps from numeral 0. */
 const passesOf = (sum: number): number => Math.floor(sum / 10);
 
 /** One turn tells its own motion, but for standing still against going right round. */
@@ -63,16 +64,15 @@ function singleTurn(digit: number, shown: number, expected: number, backward: bo
 function severalTurns(digit: number, shown: number, expected: number, oneWay: number): number[] {
   const off = stepsBetween(digit + expected, shown);
   const offs = Math.abs(off) < 2 ? [off] : [off, off > 0 ? off - 10 : off + 10];
-  const sums = offs.map((steps) => digit + expected + steps).filter((sum) => (sum - digit) * oneWay >= 0);
-  return sums;
+  return offs.map((steps) => digit + expected + steps).filter((sum) => (sum - digit) * oneWay >= 0);
 }
 
 interface Found {
   /** Sums possible at the end of the last stretch. */
   readonly sums: readonly number[];
   /** Bounds of the digit at the outset, and of the steps gone astray by the end. */
-  readonly digits: Motion;
-  readonly astray: Motion;
+  readonly digits: Span;
+  readonly astray: Span;
 }
 
 /** +1 or −1 where all turns went one way, else 0. */
@@ -97,7 +97,7 @@ function fitting(seen: Seen, driven: number, fewest: number, most: number): Foun
   return { sums, digits: boundsOf(digits), astray: { low: 0, high: 0 } };
 }
 
-function boundsOf(values: readonly number[]): Motion {
+function boundsOf(values: readonly number[]): Span {
   let [low, high] = [Number.POSITIVE_INFINITY, Number.NEGATIVE_INFINITY];
   for (const value of values) {
     if (value < low) low = value;
@@ -127,25 +127,33 @@ function straying(track: Track, seen: Seen, driven: number, fewest: number, most
   return { sums, digits: boundsOf(seen.before), astray: boundsOf(astray) };
 }
 
-/** An unread wheel may have strayed either way, as far as a difference is told: −4 to +5. */
-function unseen(seen: Seen, driven: number, fewest: number, most: number): Found {
+/** The furthest a wheel is thought to have run on where nobody read it; a difference is told up to +5. */
+const RUN_ON = 5;
+
+/** An unread wheel may have stood still, or run on; null where that bounds nothing. */
+function unseen(track: Track, seen: Seen, driven: number, fewest: number, most: number): Found | null {
+  const oneWay = directionOf(track);
+  if (oneWay === 0 || (track.stretches?.length ?? 0) > 1) return null;
   const digits = boundsOf(seen.before);
-  const sums = [digits.low + driven + fewest - 4, digits.high + driven + most + 5];
-  return { sums, digits, astray: { low: -4, high: 5 } };
+  const sums =
+    oneWay > 0
+      ? [digits.low, digits.high + driven + most + RUN_ON]
+      : [digits.low + driven + fewest - RUN_ON, digits.high];
+  return { sums, digits, astray: { low: 0, high: 0 } };
 }
 
 /** Most carries that a stretch can make due to the wheel above, as a range of net counts. */
-function bounds(stretch: Stretch, into: number): Motion {
+function bounds(stretch: Stretch, into: number): Span {
   if (into > stretch.reach) return { low: 0, high: 0 };
   return stretch.backward ? { low: -stretch.turns, high: 0 } : { low: 0, high: stretch.turns };
 }
 
 /** Puts the passes of each stretch together into what is due to the wheel above. */
-function dueFrom(stretches: readonly Stretch[], into: number, passes: readonly Motion[] | null): Due {
+function dueFrom(stretches: readonly Stretch[], into: number, passes: readonly Span[] | null): Due {
   const fewest: number[] = [];
   const most: number[] = [];
   let [low, high] = [0, 0];
-  let before: Motion = { low: 0, high: 0 };
+  let before: Span = { low: 0, high: 0 };
   let gross: number | null = 0;
   let any: boolean | null = false;
   stretches.forEach((stretch, index) => {
@@ -189,10 +197,10 @@ export function dueAbove(track: Track, stretches: readonly Stretch[], wheel: num
   const read = seen.after.length < 10;
   const found = read
     ? (fitting(seen, end, fewest, most) ?? straying(track, seen, end, fewest, most))
-    : unseen(seen, end, fewest, most);
+    : unseen(track, seen, end, fewest, most);
   if (!found) return anythingDue(stretches, wheel + 1);
   const { low, high } = boundsOf(found.sums);
-  const passes = stretches.map((_, index): Motion => {
+  const passes = stretches.map((_, index): Span => {
     if (index === last) return { low: passesOf(low), high: passesOf(high) };
     const steps = driven[index] ?? 0;
     return {

@@ -1,13 +1,13 @@
 import { spinCounter } from './batch';
-import { createDrive, driveFaulty, driveHealthy } from './drive';
-import { tableOf } from './fault-table';
+import { createDrive, type Drive, driveFaulty, driveHealthy } from './drive';
+import { type FaultTable, tableOf } from './fault-table';
 import type { Fault } from './faults';
 import type { Layout } from './layout';
 import { type Chance, chanceFromSeed } from './random';
 import { readDigits, writeDigits } from './registers';
-import { createResultRegister } from './result-register';
+import { ResultRegister } from './result-register';
 import type { Clearable, Operation, Register, Start, Way } from './steps';
-import { type CounterTurn, type TurnMarks, turnCounter } from './turn';
+import { type CounterTurn, turnCounter } from './turn';
 
 /** How a machine stands after an operation. Registers and slides are written highest first. */
 export interface MachineState {
@@ -68,142 +68,147 @@ function wheelsOf(bits: number): number[] {
   return wheels;
 }
 
-/** A machine with its faults, if any, as it stands before the first operation: slides at zero, carriage at 1. */
-export function createMachine(layout: Layout, options: MachineOptions = {}): Machine {
-  const counter = acceptedDigits(options.start?.counter, layout.counterWheels);
-  const table = options.faults && options.faults.length > 0 ? tableOf(layout, options.faults) : null;
-  const chance: Chance = chanceFromSeed(options.seed ?? 0);
-  const slides = new Uint8Array(layout.settingSlides);
-  const drive = createDrive(layout);
-  const marks: TurnMarks = { made: 0, overflow: false, levers: 0 };
-  const result = createResultRegister(
-    acceptedDigits(options.start?.result, layout.resultWheels),
-    drive,
-    marks,
-    table && { table, chance },
-    layout.resultCarry === null,
-  );
-  let carriage = 1;
-  let reversed = false;
+class WorkingMachine implements Machine {
+  readonly counter: Uint8Array;
+  readonly slides: Uint8Array;
+  carriage = 1;
+  reversed = false;
+  private readonly table: FaultTable | null;
+  private readonly chance: Chance;
+  private readonly drive: Drive;
+  private readonly register: ResultRegister;
   /** The way the drive was last worked out for; null when slides or carriage have moved since. */
-  let driven: Way | null = null;
-  let overflow = false;
+  private driven: Way | null = null;
+  private overflow = false;
 
-  const prepare = (way: Way): void => {
-    if (driven === way && !table?.randomDrive) return;
-    if (way === 'subtract' && layout.subtraction === 'none') throw new Error('This layout does not subtract');
-    result.redriven();
-    if (table) driveFaulty(drive, layout, slides, carriage, way, table, chance);
-    else driveHealthy(drive, layout, slides, carriage, way);
-    driven = way;
-  };
+  constructor(
+    private readonly layout: Layout,
+    options: MachineOptions,
+  ) {
+    const { start, faults = [], seed = 0 } = options;
+    this.table = faults.length > 0 ? tableOf(layout, faults) : null;
+    this.chance = chanceFromSeed(seed);
+    this.drive = createDrive(layout);
+    this.slides = new Uint8Array(layout.settingSlides);
+    this.counter = acceptedDigits(start?.counter, layout.counterWheels);
+    const result = acceptedDigits(start?.result, layout.resultWheels);
+    const ailing = this.table && { table: this.table, chance: this.chance };
+    this.register = new ResultRegister(result, this.drive, ailing, layout.resultCarry === null);
+  }
 
-  const counting = (way: Way): CounterTurn => {
-    const lever = reversed && !(table && chance.happens(table.reverseDead));
-    const inverted = table !== null && chance.happens(table.counterInverted);
-    const backward = ((way === 'subtract') !== lever) !== inverted;
-    return { wheel: carriage - 1, backward, carries: layout.counterCarry };
-  };
+  get result(): Readonly<Uint8Array> {
+    return this.register.digits;
+  }
 
-  const turn = (way: Way): void => {
-    prepare(way);
-    result.turn();
-    if (counter.length > 0) turnCounter(counter, counting(way), table, chance);
-    overflow = marks.overflow;
-  };
+  get carryBits(): number {
+    return this.register.carries;
+  }
 
-  const turnMany = (way: Way, times: number): void => {
+  get state(): MachineState {
+    return {
+      result: writeDigits(this.register.digits),
+      counter: writeDigits(this.counter),
+      slides: writeDigits(this.slides),
+      carriage: this.carriage,
+      reversed: this.reversed,
+      overflow: this.overflow,
+      carries: wheelsOf(this.register.carries),
+    };
+  }
+
+  apply(operation: Operation): MachineState {
+    this.advance(operation);
+    return this.state;
+  }
+
+  advance(operation: Operation): void {
+    this.register.forgetCarries();
+    this.overflow = false;
+    switch (operation.do) {
+      case 'set':
+        this.slides.set(acceptedDigits(operation.slides, this.slides.length));
+        this.driven = null;
+        break;
+      case 'turn':
+        this.turnMany(operation.way, operation.times ?? 1);
+        break;
+      case 'shift':
+        this.carriage = operation.to;
+        this.driven = null;
+        break;
+      case 'reverse':
+        this.reversed = operation.on;
+        break;
+      case 'clear':
+        this.clear(operation.what);
+        break;
+    }
+  }
+
+  turn(way: Way): void {
+    this.prepare(way);
+    this.register.turn();
+    if (this.counter.length > 0) turnCounter(this.counter, this.counting(way), this.table, this.chance);
+    this.overflow = this.register.overflow;
+  }
+
+  private turnMany(way: Way, times: number): void {
     let left = times;
     let ever = false;
-    if (times >= FEW_TURNS && !table?.random) {
-      prepare(way);
+    if (times >= FEW_TURNS && !this.table?.random) {
+      this.prepare(way);
       // The last turn is made, not counted: it tells which wheels received a carry.
-      result.spin(times - 1);
-      spinCounter(counter, counting(way), times - 1, table);
-      ever = marks.overflow;
+      this.register.spin(times - 1);
+      spinCounter(this.counter, this.counting(way), times - 1, this.table);
+      ever = this.register.overflow;
       left = 1;
     }
     for (; left > 0; left -= 1) {
-      turn(way);
-      ever ||= overflow;
+      this.turn(way);
+      ever ||= this.overflow;
     }
-    overflow = ever;
-  };
+    this.overflow = ever;
+  }
 
-  const clearWheels = (register: Register, digits: Uint8Array): void => {
+  /** Works the drive of the coming turn out, unless it is the last one's. */
+  private prepare(way: Way): void {
+    const { layout, table } = this;
+    if (this.driven === way && !table?.randomDrive) return;
+    if (way === 'subtract' && layout.subtraction === 'none') throw new Error('This layout does not subtract');
+    this.register.redriven();
+    if (table) driveFaulty(this.drive, layout, this.slides, this.carriage, way, table, this.chance);
+    else driveHealthy(this.drive, layout, this.slides, this.carriage, way);
+    this.driven = way;
+  }
+
+  private counting(way: Way): CounterTurn {
+    const { table, chance } = this;
+    const lever = this.reversed && !(table && chance.happens(table.reverseDead));
+    const inverted = table !== null && chance.happens(table.counterInverted);
+    const backward = ((way === 'subtract') !== lever) !== inverted;
+    return { wheel: this.carriage - 1, backward, carries: this.layout.counterCarry };
+  }
+
+  private clear(what: Clearable): void {
+    if (what !== 'counter') {
+      this.clearWheels('result', this.register.digits);
+      this.register.moved();
+    }
+    if (what !== 'result') this.clearWheels('counter', this.counter);
+  }
+
+  private clearWheels(register: Register, digits: Uint8Array): void {
+    const { table, chance } = this;
     for (let wheel = 0; wheel < digits.length; wheel += 1) {
       const stays = table !== null && digits[wheel] !== 0 && chance.happens(table.clear[register][wheel] ?? 0);
       if (!stays) digits[wheel] = 0;
     }
-  };
+  }
+}
 
-  const clear = (what: Clearable): void => {
-    if (what !== 'counter') {
-      clearWheels('result', result.digits);
-      result.moved();
-    }
-    if (what !== 'result') clearWheels('counter', counter);
-  };
-
-  const advance = (operation: Operation): void => {
-    result.forgetCarries();
-    overflow = false;
-    switch (operation.do) {
-      case 'set':
-        slides.set(acceptedDigits(operation.slides, slides.length));
-        driven = null;
-        break;
-      case 'turn':
-        turnMany(operation.way, operation.times ?? 1);
-        break;
-      case 'shift':
-        carriage = operation.to;
-        driven = null;
-        break;
-      case 'reverse':
-        reversed = operation.on;
-        break;
-      case 'clear':
-        clear(operation.what);
-        break;
-    }
-  };
-
-  const state = (): MachineState => ({
-    result: writeDigits(result.digits),
-    counter: writeDigits(counter),
-    slides: writeDigits(slides),
-    carriage,
-    reversed,
-    overflow,
-    carries: wheelsOf(result.carries),
-  });
-
-  return {
-    apply: (operation) => {
-      advance(operation);
-      return state();
-    },
-    advance,
-    turn,
-    get carryBits() {
-      return result.carries;
-    },
-    get state() {
-      return state();
-    },
-    get carriage() {
-      return carriage;
-    },
-    get reversed() {
-      return reversed;
-    },
-    get result() {
-      return result.digits;
-    },
-    counter,
-    slides,
-  };
+/** A machine with its faults, if any, as it stands before the first operation: slides at zero, carriage at 1. */
+export function createMachine(layout: Layout, options: MachineOptions = {}): Machine {
+  return new WorkingMachine(layout, options);
 }
 
 export interface SimulationInput extends MachineOptions {

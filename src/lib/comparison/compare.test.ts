@@ -192,6 +192,15 @@ describe('an excluded wheel', () => {
     expect(run([set('1'), turn({ result: '010' })], '099', { excluded }).agrees).toBe(false);
   });
 
+  it('may have carried only as far as carries reach', () => {
+    // At position 1 a carry reaches wheel 2 and no further, at position 2 it reaches wheel 3.
+    const short = layoutOf({ ...small, settingSlides: 1, carriagePositions: 2, resultCarry: 1, subtraction: 'none' });
+    const middle: Place[] = [{ register: 'result', wheel: 2 }];
+    const steps = (result: string): Step[] => [set('0'), turn(), { do: 'shift', to: 2 }, turn({ result })];
+    const verdict = (result: string) => verdicts(run(steps(result), '500', { layout: short, excluded: middle }))[0];
+    expect(['400', '500', '600', '700'].map(verdict)).toEqual(['differs', 'agrees', 'agrees', 'differs']);
+  });
+
   it('owes nothing where nothing turned', () => {
     const still = run([set('1'), { ...set('2'), read: { result: '099' } }], '099', { excluded });
     expect(fromLast(still)).toEqual([0, 9, 9]);
@@ -240,6 +249,7 @@ describe('the comparer', () => {
     expect(due(long)).toEqual([null, null, false]);
     const off = run([set('1'), ...steps, turn({ result: '011' })], '000', { layout: backward });
     expect(verdicts(off)).toEqual(['agrees', 'differs', 'agrees']);
+    expect(show(off, ({ follows }) => follows)).toEqual([false, false, false]);
   });
 
   it('takes an operation apart from its reading', () => {

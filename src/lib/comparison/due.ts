@@ -191,7 +191,7 @@ export function anythingDue(stretches: readonly Stretch[], into: number): Due {
 /** What wheel `wheel` (0 = units) made due to the one above, from what was seen of it and what was due to it. */
 export function dueAbove(track: Track, stretches: readonly Stretch[], wheel: number, seen: Seen, due: Due): Due {
   const last = stretches.length - 1;
-  if (last < 0) return nothingDue(stretches);
+  if (last < 0) return due;
   const driven = drivenBy(stretches, wheel);
   const [end, fewest, most] = [driven[last] ?? 0, due.fewest[last] ?? 0, due.most[last] ?? 0];
   const read = seen.after.length < 10;

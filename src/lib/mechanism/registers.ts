@@ -56,12 +56,14 @@ export function writeGlyphs(glyphs: readonly string[]): string {
   return [...glyphs].reverse().join('');
 }
 
+const EVERY_DIGIT: readonly number[] = [0, 1, 2, 3, 4, 5, 6, 7, 8, 9];
+const ALONE: readonly (readonly number[])[] = EVERY_DIGIT.map((digit) => [digit]);
+const BETWEEN: readonly (readonly number[])[] = EVERY_DIGIT.map((digit) => (digit === 9 ? [0, 9] : [digit, digit + 1]));
+
 /** Digits a glyph leaves possible, rising: one for a numeral, two for a wheel between, all for `?`. */
 export function digitsOf(glyph: string): readonly number[] {
-  if (glyph === '?') return [0, 1, 2, 3, 4, 5, 6, 7, 8, 9];
   const digit = glyph.charCodeAt(0) - 48;
-  if (glyph.length === 1) return [digit];
-  return digit === 9 ? [0, 9] : [digit, digit + 1];
+  return (glyph.length === 1 ? ALONE[digit] : BETWEEN[digit]) ?? EVERY_DIGIT;
 }
 
 /** Reads a register or slides of digits only, wheel 1 first. `tooMany` is the code for more digits than places. */

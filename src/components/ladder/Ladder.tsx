@@ -29,19 +29,28 @@ export interface LadderProps {
   readonly excluded?: readonly Place[];
   /** Rows are still being added: the newest one is kept in sight, opened and read out. */
   readonly live?: boolean;
-  /** `bench` is readable at arm's length and fills the height it is given; `desk` is for reading at a table. */
+  /** `bench` is readable at arm's length; `desk` is for reading at a table. */
   readonly density?: Density;
+  /** How high it may grow before it scrolls. `fill` takes the height of what it is put into, which must have one. */
+  readonly room?: Room;
   readonly label?: string;
   readonly legend?: 'open' | 'closed' | 'none';
   /** Told when a row is opened. */
   readonly onPick?: (row: LadderRow) => void;
 }
 
-/** Sizes that the columns are fitted for, by number of result wheels; `ladder.css` has one rule for each. */
-function sizeFor(wheels: number): 's' | 'm' | 'l' | 'xl' {
-  if (wheels <= 9) return 's';
-  if (wheels <= 12) return 'm';
-  return wheels <= 16 ? 'l' : 'xl';
+export const ROOMS = ['short', 'usual', 'fill'] as const;
+export type Room = (typeof ROOMS)[number];
+
+/**
+ * Sizes that the columns are fitted for; `ladder.css` has one rule for each. On a narrow screen a small machine
+ * shows all its wheels, a larger one its result register, with the counter a swipe away.
+ */
+function sizeFor({ resultWheels, counterWheels }: Layout): 'xs' | 's' | 'm' | 'l' | 'xl' {
+  if (resultWheels + counterWheels <= 12) return 'xs';
+  if (resultWheels <= 9) return 's';
+  if (resultWheels <= 12) return 'm';
+  return resultWheels <= 16 ? 'l' : 'xl';
 }
 
 function spoken(row: LadderRow): string {
@@ -65,7 +74,7 @@ function Space({ height, columns }: { height: number; columns: number }): ReactE
  */
 export function Ladder(props: LadderProps): ReactElement {
   const { layout, rows, excluded = [], live = false, density = 'desk', legend = 'closed', onPick } = props;
-  const { label = 'The ladder: turns by wheels' } = props;
+  const { room = 'usual', label = 'The ladder: turns by wheels' } = props;
   const frame = useRef<HTMLElement>(null);
   const detailId = useId();
   const [picked, setPicked] = useState<number | null>(null);
@@ -113,7 +122,8 @@ export function Ladder(props: LadderProps): ReactElement {
           ref={frame}
           className="ladder"
           data-density={density}
-          data-size={sizeFor(layout.resultWheels)}
+          data-size={sizeFor(layout)}
+          data-room={room}
           // biome-ignore lint/a11y/noNoninteractiveTabindex: as above.
           tabIndex={0}
           aria-label={label}

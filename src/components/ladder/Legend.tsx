@@ -45,7 +45,7 @@ export function Legend({ open = false }: { open?: boolean }): ReactElement {
         Marks and keys
       </summary>
       <div className="grid gap-4 px-4 pt-1 pb-4 text-sm">
-        <ul className="grid gap-x-6 gap-y-1 sm:grid-cols-2 lg:grid-cols-4">
+        <ul className="grid gap-x-6 gap-y-1 grid-cols-[repeat(auto-fill,minmax(min(15rem,100%),1fr))]">
           {CELLS.map(({ wheel, words }) => (
             <li key={words} className="flex items-center gap-3">
               <table className="legend-cell" aria-hidden="true">

@@ -165,6 +165,17 @@ function Rail({ layout, drawing, position }: { layout: Layout; drawing: Drawing;
   );
 }
 
+/** What the lines of the drawing mean, as far as this layout has them. */
+function Caption({ layout, drawing }: { layout: Layout; drawing: Drawing }): ReactElement {
+  const parts = [
+    layout.counterWheels > 0 ? 'Above the counter, below it the result register, both on the carriage.' : '',
+    'Wheels are numbered from the units; framed ones move with a turn.',
+    drawing.carried ? 'Unbroken line: how far a carry reaches.' : '',
+    drawing.complement ? 'Broken line: the complement steps.' : '',
+  ];
+  return <figcaption className="mt-2 max-w-[68ch] text-sm text-ink-soft">{parts.filter(Boolean).join(' ')}</figcaption>;
+}
+
 /** Wide drawings keep their numbers readable and scroll instead. */
 function widthClass(columns: number): string {
   if (columns > 40) return 'min-w-[76rem]';
@@ -184,12 +195,12 @@ export function LayoutDrawing({ layout, position = 1, shown, excluded = [], titl
   const counting = drawing.counting === null ? null : { from: drawing.counting, to: drawing.counting };
   const drives = (slide: number): boolean => drawing.driven !== null && slide + position - 1 <= drawing.driven.to;
   return (
-    <div className="overflow-x-auto">
+    <figure className="overflow-x-auto">
       <svg
         role="img"
         aria-labelledby={`${id}-title ${id}-words`}
         viewBox={`-4 0 ${drawing.width + 8} ${Y.end}`}
-        width={(drawing.width + 8) * 1.1}
+        width={(drawing.width + 8) * 1.3}
         className={`h-auto max-w-full ${widthClass(drawing.columns)}`}
       >
         <title id={`${id}-title`}>{title}</title>
@@ -238,6 +249,7 @@ export function LayoutDrawing({ layout, position = 1, shown, excluded = [], titl
         <Bracket drawing={drawing} reach={drawing.complement} y={100} dashed />
         <Rail layout={layout} drawing={drawing} position={position} />
       </svg>
-    </div>
+      {!shown && <Caption layout={layout} drawing={drawing} />}
+    </figure>
   );
 }

@@ -3,9 +3,11 @@ import { freePort } from '@/cli/local/ports';
 import { type RunningServer, startServer } from '@/cli/local/server';
 import type { Role } from '@/lib/policy';
 import { type TestDatabase, testDatabase } from './database';
+import { TEST_PASSWORD, Visitor } from './visitor';
+
+export { TEST_PASSWORD, Visitor } from './visitor';
 
 export const TEST_SECRET = 'a secret of the tests, longer than it has to be';
-export const TEST_PASSWORD = 'seven slides and a crank';
 
 export interface TestApp {
   readonly url: string;
@@ -29,52 +31,6 @@ export async function startApp(environment: Record<string, string> = {}): Promis
   });
   afterAll(() => server.stop());
   return { url: server.url, database, server, visitor: () => new Visitor(server.url) };
-}
-
-/** A browser without a window: keeps cookies, sends its origin with forms, follows nothing by itself. */
-export class Visitor {
-  readonly cookies = new Map<string, string>();
-
-  constructor(readonly base: string) {}
-
-  async fetch(path: string, init: RequestInit = {}): Promise<Response> {
-    const headers = new Headers(init.headers);
-    if (this.cookies.size > 0)
-      headers.set('cookie', [...this.cookies].map(([name, value]) => `${name}=${value}`).join('; '));
-    if (!headers.has('origin') && init.method && init.method !== 'GET') headers.set('origin', this.base);
-    const response = await fetch(new URL(path, this.base), { redirect: 'manual', ...init, headers });
-    for (const line of response.headers.getSetCookie()) this.#keep(line);
-    return response;
-  }
-
-  #keep(line: string): void {
-    const [pair = '', ...attributes] = line.split(';');
-    const at = pair.indexOf('=');
-    const name = pair.slice(0, at).trim();
-    const gone = attributes.some((one) => /^\s*max-age=0\s*$/i.test(one) || /expires=thu, 01 jan 1970/i.test(one));
-    if (gone) this.cookies.delete(name);
-    else this.cookies.set(name, pair.slice(at + 1));
-  }
-
-  get(path: string): Promise<Response> {
-    return this.fetch(path);
-  }
-
-  form(path: string, fields: Record<string, string>): Promise<Response> {
-    return this.fetch(path, { method: 'POST', body: new URLSearchParams(fields) });
-  }
-
-  send(method: 'POST' | 'PATCH' | 'PUT' | 'DELETE', path: string, body?: unknown): Promise<Response> {
-    return this.fetch(path, {
-      method,
-      headers: { 'content-type': 'application/json' },
-      ...(body === undefined ? {} : { body: JSON.stringify(body) }),
-    });
-  }
-
-  async signIn(email: string, password = TEST_PASSWORD): Promise<Response> {
-    return this.form('/sign-in', { email, password });
-  }
 }
 
 let people = 0;

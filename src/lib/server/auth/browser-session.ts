@@ -1,4 +1,4 @@
-import { Auth, skipCSRFCheck } from '@auth/core';
+import { Auth, type AuthConfig, skipCSRFCheck } from '@auth/core';
 import type { APIContext } from 'astro';
 import { scoped } from '../db/scope';
 import { closeSession, openSession } from '../store/sessions';
@@ -6,7 +6,7 @@ import { authConfig, needsSecureCookies } from './config';
 
 type Context = Pick<APIContext, 'request' | 'url' | 'clientAddress'>;
 
-function options(context: Context, sid: string | null) {
+function options(context: Context, sid: string | null): AuthConfig {
   // Our pages call Auth.js from the server; Astro has checked the form's origin before.
   return {
     ...authConfig(sid),

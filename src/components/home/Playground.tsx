@@ -97,7 +97,7 @@ function LastWords({ state }: { state: PlayState }): ReactElement {
       {row?.judged ? (
         <>
           <span className={wrong ? 'font-bold text-vermilion' : 'font-bold text-verdigris'}>
-            Turn {row.seq} {wrong ? 'differs. ' : 'agrees. '}
+            Step {row.seq} {wrong ? 'differs. ' : 'agrees. '}
           </span>
           {wrong && readingSentences(row.judged)[0]}
         </>

@@ -14,7 +14,7 @@ import type { Place } from '@/lib/comparison/compare';
 import type { Layout } from '@/lib/mechanism/layout';
 import { FaultBar } from './FaultBar';
 import { LadderDetail } from './LadderDetail';
-import { LadderHead } from './LadderHead';
+import { LadderColumns, LadderHead } from './LadderHead';
 import { LadderLine } from './LadderLine';
 import { Legend } from './Legend';
 import { moveFor } from './moves';
@@ -55,7 +55,7 @@ function sizeFor({ resultWheels, counterWheels }: Layout): 'xs' | 's' | 'm' | 'l
 
 function spoken(row: LadderRow): string {
   const said = row.judged ? readingSentences(row.judged).join(' ') : 'No reading.';
-  return `Turn ${row.seq}, ${operationSentence(row.operation)}. ${said}`;
+  return `Step ${row.seq}, ${operationSentence(row.operation)}. ${said}`;
 }
 
 function Space({ height, columns }: { height: number; columns: number }): ReactElement | null {
@@ -131,6 +131,7 @@ export function Ladder(props: LadderProps): ReactElement {
           onClick={onClick}
         >
           <table aria-rowcount={rows.length + 2}>
+            <LadderColumns layout={layout} />
             <LadderHead layout={layout} excluded={excluded} />
             <tbody>
               <Space height={above} columns={columns} />
@@ -147,7 +148,7 @@ export function Ladder(props: LadderProps): ReactElement {
       </div>
       <div className="border border-t-0 border-ink bg-leaf">
         {row && (
-          <section id={detailId} aria-label={`Turn ${row.seq} in detail`} className="print:hidden">
+          <section id={detailId} aria-label={`Step ${row.seq} in detail`} className="print:hidden">
             <LadderDetail row={row} />
           </section>
         )}

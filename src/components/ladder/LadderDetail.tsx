@@ -105,7 +105,7 @@ export function LadderDetail({ row }: { row: LadderRow }): ReactElement {
     <div className="grid gap-3 px-4 py-3">
       <p className="flex flex-wrap items-baseline gap-x-4">
         <strong>
-          Turn {row.seq}: {operationSentence(row.operation)}
+          Step {row.seq}: {operationSentence(row.operation)}
         </strong>
         <span className="text-sm text-ink-soft">
           {standingWords(row)}

@@ -29,6 +29,24 @@ interface Props {
   readonly excluded: readonly Place[];
 }
 
+/** Widths of the columns: the rows themselves need not be measured. */
+export function LadderColumns({ layout }: { layout: Layout }): ReactElement {
+  const wheels = (count: number): ReactElement => <col span={count} className="wheel-column" />;
+  return (
+    <colgroup>
+      <col className="turn-column" />
+      {wheels(layout.resultWheels)}
+      {layout.counterWheels > 0 && (
+        <>
+          <col className="gap-column" />
+          {wheels(layout.counterWheels)}
+        </>
+      )}
+      <col className="note-column" />
+    </colgroup>
+  );
+}
+
 /** Whose columns these are, and the positions in them: 1 = units, at the right. */
 export function LadderHead({ layout, excluded }: Props): ReactElement {
   const out = (register: Register): ReadonlySet<number> =>
@@ -37,7 +55,7 @@ export function LadderHead({ layout, excluded }: Props): ReactElement {
     <thead>
       <tr aria-rowindex={1}>
         <th scope="col" rowSpan={2} className="turn">
-          Turn
+          Step
         </th>
         <th scope="colgroup" colSpan={layout.resultWheels}>
           Result register

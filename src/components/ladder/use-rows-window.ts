@@ -1,5 +1,5 @@
 import { useVirtualizer, type VirtualItem, type Virtualizer } from '@tanstack/react-virtual';
-import { type RefObject, useEffect, useState } from 'react';
+import { type RefObject, useCallback, useEffect, useState } from 'react';
 import { flushSync } from 'react-dom';
 import type { LadderRow } from './rows';
 
@@ -56,12 +56,18 @@ export function useRowsWindow(
   const rem = useRem();
   const printing = usePrinting();
   const heights = HEIGHTS[density];
+  // Kept from one drawing to the next: new functions would have all rows measured again at every scroll.
+  const estimateSize = useCallback(
+    (index: number) => (rows[index]?.judged ? heights.reading : heights.bare) * rem,
+    [rows, heights, rem],
+  );
+  const getItemKey = useCallback((index: number) => rows[index]?.seq ?? index, [rows]);
   const virtualizer = useVirtualizer<HTMLElement, Element>({
     count: rows.length,
     getScrollElement: () => frame.current,
-    estimateSize: (index) => (rows[index]?.judged ? heights.reading : heights.bare) * rem,
-    getItemKey: (index) => rows[index]?.seq ?? index,
-    overscan: 10,
+    estimateSize,
+    getItemKey,
+    overscan: 6,
     // The server draws what a frame of this height shows.
     initialRect: { width: 0, height: 640 },
     scrollPaddingEnd: HEAD_REM * rem,

@@ -176,10 +176,12 @@ function Caption({ layout, drawing }: { layout: Layout; drawing: Drawing }): Rea
   return <figcaption className="mt-2 max-w-[68ch] text-sm text-ink-soft">{parts.filter(Boolean).join(' ')}</figcaption>;
 }
 
-/** Wide drawings keep their numbers readable and scroll instead. */
+/** Wide drawings keep their numbers readable and scroll instead, by keyboard too. */
+const SCROLLING_FROM = 24;
+
 function widthClass(columns: number): string {
   if (columns > 40) return 'min-w-[76rem]';
-  return columns > 24 ? 'min-w-[46rem]' : '';
+  return columns > SCROLLING_FROM ? 'min-w-[46rem]' : '';
 }
 
 /**
@@ -195,7 +197,7 @@ export function LayoutDrawing({ layout, position = 1, shown, excluded = [], titl
   const counting = drawing.counting === null ? null : { from: drawing.counting, to: drawing.counting };
   const drives = (slide: number): boolean => drawing.driven !== null && slide + position - 1 <= drawing.driven.to;
   return (
-    <figure className="overflow-x-auto">
+    <figure className="overflow-x-auto" tabIndex={drawing.columns > SCROLLING_FROM ? 0 : undefined}>
       <svg
         role="img"
         aria-labelledby={`${id}-title ${id}-words`}

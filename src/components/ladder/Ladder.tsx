@@ -117,7 +117,6 @@ export function Ladder(props: LadderProps): ReactElement {
     <div className="grid min-h-0">
       {faults.length > 0 && <FaultBar rows={rows} faults={faults} active={active} onPick={pick} />}
       <div className="ladder-frame min-h-0">
-        {/* biome-ignore lint/a11y/noNoninteractiveElementInteractions: a scrolling frame is reached by keyboard, and its keys are listed under "Marks and keys". */}
         <section
           ref={frame}
           className="ladder"

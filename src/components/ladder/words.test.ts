@@ -55,6 +55,12 @@ describe('carry marks', () => {
   });
 });
 
+it('the lowest wheel takes no carry: a step too far is its own', () => {
+  const far = wheel({ wheel: 1, read: '3', verdict: 'differs', stepsOff: 1, carryMade: true });
+  expect(carryMark(far)).toBeNull();
+  expect(wheelSentence('result', far)).toBe('Wheel 1 shows 3, 2 was expected: one step too far.');
+});
+
 describe('a cell read out', () => {
   it.each<[LadderWheel, string]>([
     [missed, 'wheel 2: 1, expected 2, carry missed'],
@@ -73,7 +79,7 @@ describe('a wheel in a sentence', () => {
     [missed, 'Wheel 2 shows 1, 2 was expected: the carry from wheel 1 was due and was not made.'],
     [
       wheel({ read: '3', verdict: 'differs', stepsOff: 1, carryMade: true }),
-      'Wheel 2 shows 3, 2 was expected: it moved on by a carry, and wheel 1 had asked for none.',
+      'Wheel 2 shows 3, 2 was expected: moved on as by a carry, and wheel 1 had asked for none.',
     ],
     [wheel({ read: '5', verdict: 'differs', stepsOff: 3 }), 'Wheel 2 shows 5, 2 was expected: 3 steps too far.'],
     [

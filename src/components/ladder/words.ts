@@ -54,8 +54,9 @@ export const CARRY_WORDS: Record<CarryMark, string> = {
   unasked: 'carry nobody asked for',
 };
 
+/** The lowest wheel has none below it that could ask for a carry: a step too far is its own there. */
 export function carryMark(wheel: LadderWheel): CarryMark | null {
-  if (wheel.carryMade === null || wheel.carryDue === null) return null;
+  if (wheel.wheel === 1 || wheel.carryMade === null || wheel.carryDue === null) return null;
   if (wheel.carryDue) return wheel.carryMade ? 'made' : 'missed';
   return wheel.carryMade ? 'unasked' : null;
 }
@@ -108,7 +109,7 @@ function reasonWords(register: Register, wheel: LadderWheel): string {
   const below = `${NAME[register]} ${wheel.wheel - 1}`;
   const mark = carryMark(wheel);
   if (mark === 'missed') return `the carry from ${below} was due and was not made`;
-  if (mark === 'unasked') return `it moved on by a carry, and ${below} had asked for none`;
+  if (mark === 'unasked') return `moved on as by a carry, and ${below} had asked for none`;
   if (wheel.follows) return `that follows from what ${below} did`;
   if (wheel.stepsOff !== null) return stepsOffWords(wheel.stepsOff);
   return 'no reading before it allows that';
@@ -178,7 +179,7 @@ function shortFault(register: Register, wheel: LadderWheel): string {
   const mark = carryMark(wheel);
   if (wheel.verdict === 'between') return `${at} between numerals`;
   if (mark === 'missed') return `carry into ${at} missed`;
-  if (mark === 'unasked') return `carry into ${at} unasked`;
+  if (mark === 'unasked') return `carry into ${at} nobody asked for`;
   return wheel.stepsOff === null ? `${at} differs` : `${at}: ${stepsOffWords(wheel.stepsOff)}`;
 }
 

@@ -21,10 +21,14 @@ module.exports = {
     layer('interchange', ['comparison', 'mechanism']),
     {
       name: 'core-is-pure',
-      comment: 'The core runs in the page, a worker and the server alike: no packages, no Node. The CSV reader is the one exception.',
+      comment:
+        'The core runs in the page, a worker and the server alike: no packages, no Node. The CSV reader is the one exception.',
       severity: 'error',
       from: { path: `^src/lib/(${CORE})/`, pathNot: tests },
-      to: { dependencyTypes: ['npm', 'npm-dev', 'npm-peer', 'core'], pathNot: 'node_modules/(papaparse|@types/papaparse)/' },
+      to: {
+        dependencyTypes: ['npm', 'npm-dev', 'npm-peer', 'core'],
+        pathNot: 'node_modules/(papaparse|@types/papaparse)/',
+      },
     },
     {
       name: 'papaparse-in-interchange-only',
@@ -52,13 +56,26 @@ module.exports = {
       to: { path: '^src/(components|layouts|pages|cli)/|^src/middleware' },
     },
     { name: 'nobody-imports-a-page', severity: 'error', from: {}, to: { path: '^src/pages/' } },
-    { name: 'nobody-imports-a-command', severity: 'error', from: { path: '^src/', pathNot: '^src/cli/' }, to: { path: '^src/cli/' } },
-    { name: 'no-circles', severity: 'error', from: {}, to: { circular: true, viaOnly: { dependencyTypesNot: ['type-only'] } } },
+    {
+      name: 'nobody-imports-a-command',
+      severity: 'error',
+      from: { path: '^src/', pathNot: '^src/cli/' },
+      to: { path: '^src/cli/' },
+    },
+    {
+      name: 'no-circles',
+      severity: 'error',
+      from: {},
+      to: { circular: true, viaOnly: { dependencyTypesNot: ['type-only'] } },
+    },
   ],
   options: {
     doNotFollow: { path: 'node_modules' },
     tsPreCompilationDeps: true,
     tsConfig: { fileName: 'tsconfig.json' },
-    enhancedResolveOptions: { extensions: ['.ts', '.tsx', '.mjs', '.js'], conditionNames: ['import', 'require', 'node', 'default'] },
+    enhancedResolveOptions: {
+      extensions: ['.ts', '.tsx', '.mjs', '.js'],
+      conditionNames: ['import', 'require', 'node', 'default'],
+    },
   },
 };

@@ -124,7 +124,7 @@ export const DEMO_RUNS: readonly DemoRun[] = [
     tester: 'tester',
     title: 'First turns',
     startedAt: '2026-11-19T09:15:00Z',
-    beats: SMOKE,
+    beats: [...SMOKE, ...repeat(4, [add])],
     faults: [{ kind: 'counter-carry-missed', wheel: 2 }],
     notes: [{ beat: 0, text: 'Stiff for the first quarter, then free.' }],
   },

@@ -47,7 +47,7 @@ function Dialogs({ run, asked, picked, onClose }: DialogsProps): ReactElement {
         onDo={(reason) => (last ? run.takeBack(last.seq, reason) : Promise.resolve(null))}
         onClose={onClose}
       >
-        <p>
+        <p className="first-letter:uppercase">
           {last ? `${operationSentence(last.operation)}. ` : ''}It stays in sight, marked, and is not judged. The next
           step gets the next number.
         </p>
@@ -117,12 +117,14 @@ export function RunBench(props: RunProps): ReactElement {
       />
       <section
         aria-label="Entry"
-        className="sticky bottom-0 z-20 -mx-4 grid gap-x-8 gap-y-3 border-t-2 border-ink bg-leaf px-4 py-3 sm:-mx-8 sm:px-8 lg:grid-cols-[minmax(0,3fr)_minmax(0,2fr)] print:hidden"
+        className="z-20 -mx-4 grid gap-x-10 gap-y-3 border-ink bg-leaf px-4 py-3 max-md:order-first max-md:border-b md:sticky md:bottom-0 md:-mx-8 md:border-t-2 md:px-8 lg:grid-cols-[minmax(0,1fr)_minmax(0,35rem)] print:hidden"
       >
         <EntryLine {...control} layout={run.layout} onKeys={() => setAsked('keys')} />
         <div className="grid content-start gap-3">
-          <SaveMark state={run.saving} />
-          <Verdict row={run.rows.at(-1)} />
+          <div className="grid gap-2 max-md:order-first">
+            <SaveMark state={run.saving} />
+            <Verdict row={run.rows.at(-1)} />
+          </div>
           <Stopped
             state={run.saving}
             here={paths.run(props.id)}
@@ -130,12 +132,10 @@ export function RunBench(props: RunProps): ReactElement {
             onPutAfter={() => void run.putAfter()}
             onDiscard={() => void run.discard()}
           />
+          <Controls layout={run.layout} entry={entry} onCommand={control.onCommand} />
         </div>
       </section>
-      <div className="grid gap-6 print:hidden">
-        <Controls layout={run.layout} entry={entry} onCommand={control.onCommand} />
-        <RunActions run={run} mayLog={props.mayLog} machineRuns={paths.runs()} />
-      </div>
+      <RunActions run={run} mayLog={props.mayLog} machineRuns={paths.runs()} />
       <Dialogs run={run} asked={asked} picked={rowToCorrect(run.rows, picked)} onClose={close} />
     </div>
   );

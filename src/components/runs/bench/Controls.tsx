@@ -8,6 +8,12 @@ const GROUPS: readonly { readonly name: string; readonly commands: readonly Comm
   { name: 'The record', commands: ['note', 'take-back', 'correct', 'finish', 'keys'] },
 ];
 const SHORT: Partial<Record<Command, string>> = {
+  slides: 'Slides',
+  carriage: 'Carriage',
+  reverse: 'Reverse',
+  'take-back': 'Take back',
+  correct: 'Correct',
+
   add: 'Add',
   subtract: 'Subtract',
   times: 'Times',
@@ -29,11 +35,11 @@ interface Props {
 /** Everything that a key does, for a finger or a mouse; each says its key. */
 export function Controls({ layout, entry, onCommand }: Props): ReactElement {
   return (
-    <div className="grid gap-x-6 gap-y-3 lg:flex lg:flex-wrap">
+    <div className="grid gap-1.5">
       {GROUPS.map(({ name, commands }) => (
         <fieldset key={name} className="min-w-0">
-          <legend className="mb-1 text-xs text-ink-soft">{name}</legend>
-          <div className="grid grid-cols-2 gap-px border border-rule-firm bg-rule-firm sm:flex sm:flex-wrap sm:gap-0 sm:bg-transparent">
+          <legend className="sr-only">{name}</legend>
+          <div className="flex flex-wrap gap-px">
             {commands.map((command) => (
               <button
                 key={command}
@@ -41,10 +47,10 @@ export function Controls({ layout, entry, onCommand }: Props): ReactElement {
                 aria-pressed={isPressed(command, entry)}
                 disabled={command === 'subtract' && layout.subtraction === 'none'}
                 onClick={() => onCommand(command)}
-                className="flex min-h-11 items-center justify-between gap-2.5 bg-leaf px-3 text-sm hover:bg-verdigris-wash disabled:text-ink-soft aria-pressed:bg-ink aria-pressed:text-paper sm:border-r sm:border-rule sm:last:border-r-0"
+                className="flex min-h-11 grow items-center justify-between gap-2 border border-rule-firm bg-leaf px-2.5 text-sm hover:border-ink hover:bg-verdigris-wash disabled:text-ink-soft aria-pressed:bg-ink aria-pressed:text-paper"
               >
                 {SHORT[command] ?? COMMANDS[command].word}
-                <kbd className="border border-current px-1 text-xs leading-4 opacity-80">
+                <kbd className="border border-current px-1 text-xs leading-4">
                   {KEY[COMMANDS[command].keys[0]] ?? COMMANDS[command].keys[0].toUpperCase()}
                 </kbd>
               </button>

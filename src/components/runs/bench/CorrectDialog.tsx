@@ -78,7 +78,10 @@ export function CorrectDialog({ open, layout, row, onCorrect, onClose }: Props):
           void confirm();
         }}
       >
-        <p>{row ? `${operationSentence(row.operation)}. The earlier reading stays on record.` : ''}</p>
+        <p className="first-letter:uppercase">
+          {row ? `${operationSentence(row.operation)}. ` : ''}
+          {row?.judged ? 'The earlier reading stays on record.' : 'Nothing was read here yet.'}
+        </p>
         <Field
           label="What stood in the windows"
           hint={layout.counterWheels > 0 ? 'Result, then / and the counter.' : undefined}

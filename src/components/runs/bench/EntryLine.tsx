@@ -83,27 +83,27 @@ export function EntryLine(props: Props): ReactElement {
           placeholder={reading ? (layout.counterWheels > 0 ? 'result / counter' : 'result') : LINE_LABELS[entry.asking]}
           aria-invalid={entry.wrong || undefined}
           aria-describedby={`${id}-said`}
-          className="h-14 w-0 min-w-44 flex-1 border-2 border-ink bg-leaf px-3 text-2xl placeholder:text-base placeholder:text-ink-soft aria-invalid:border-vermilion"
+          className="h-14 w-0 min-w-28 flex-1 border-2 border-ink bg-leaf px-3 text-2xl placeholder:text-base placeholder:text-ink-soft aria-invalid:border-vermilion"
         />
         {reading &&
           SIGNS.filter(({ sign }) => sign !== '/' || layout.counterWheels > 0).map(({ sign, word }) => (
             <Button
               key={sign}
               variant="quiet"
-              className="min-w-12 text-xl"
+              className={`min-w-11 px-2! text-xl ${sign === '/' ? 'max-sm:hidden' : ''}`}
               aria-label={`${sign}: ${word}`}
               onClick={() => onType(entry.text + sign, true)}
             >
               {sign}
             </Button>
           ))}
-        <Button type="submit" className="min-w-24">
+        <Button type="submit" className="sm:min-w-24">
           Enter
         </Button>
       </div>
       <p
         id={`${id}-said`}
-        className={`min-h-6 text-sm ${entry.wrong ? 'text-vermilion' : 'text-ink-soft'}`}
+        className={`text-sm md:min-h-6 ${entry.wrong ? 'text-vermilion' : 'text-ink-soft'}`}
         role={entry.wrong ? 'alert' : undefined}
       >
         {entry.said}

@@ -9,7 +9,7 @@ import type { RunExclusion } from '../db/schema/runs';
 import { uniqueViolation } from '../db/violations';
 import { notFound, Refusal, refuseInput } from '../http';
 import type { Insider } from './insider';
-import { holdMachine, idFrom } from './machines';
+import { holdMachine, idFrom } from './machine-hold';
 
 /** Every exclusion of a machine: open ones first, from the lowest wheel, then the ended ones, latest first. */
 export async function exclusionsOf(tx: Tx, { workshop }: Insider, machineId: string): Promise<ExclusionShown[]> {

@@ -10,7 +10,7 @@ import { scoped, widen } from '../db/scope';
 import { notFound, Refusal } from '../http';
 import { accountOf, addPerson } from './accounts';
 import type { Insider } from './insider';
-import { idFrom } from './machines';
+import { idFrom } from './machine-hold';
 import { admit } from './people';
 
 const VALID_DAYS = 7;

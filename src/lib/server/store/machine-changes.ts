@@ -11,7 +11,7 @@ import { uniqueViolation } from '../db/violations';
 import { admitted } from '../doors';
 import { Refusal, refuseInput } from '../http';
 import type { Insider } from './insider';
-import { type HeldMachine, holdMachine } from './machines';
+import { type HeldMachine, holdMachine } from './machine-hold';
 
 /** Turns a name that is taken into words; every other error stays what it is. */
 async function withFreeName<T>(name: string | undefined, work: () => Promise<T>): Promise<T> {

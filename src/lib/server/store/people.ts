@@ -5,7 +5,7 @@ import type { Tx } from '../db/client';
 import { membership, person, workshop } from '../db/schema/people';
 import { notFound, Refusal } from '../http';
 import type { Insider } from './insider';
-import { idFrom } from './machines';
+import { idFrom } from './machine-hold';
 
 const standing = (workshopId: string) => and(eq(membership.workshopId, workshopId), isNull(membership.endedAt));
 

@@ -11,7 +11,7 @@ import { machine } from '../db/schema/machines';
 import { run, runFile } from '../db/schema/runs';
 import { notFound, Refusal } from '../http';
 import type { Insider } from './insider';
-import { type HeldMachine, holdMachine } from './machines';
+import { type HeldMachine, holdMachine } from './machine-hold';
 import { finishRun, startRun } from './run-log';
 import { insertSteps } from './run-rows';
 import { rewriteTallies } from './run-tallies';

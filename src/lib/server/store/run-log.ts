@@ -13,7 +13,7 @@ import { admitted } from '../doors';
 import { notFound, Refusal } from '../http';
 import { openExclusions } from './exclusions';
 import type { Insider } from './insider';
-import { holdMachine } from './machines';
+import { holdMachine } from './machine-hold';
 import { insertSteps, type RowToAdd } from './run-rows';
 import { rewriteTallies } from './run-tallies';
 import { entriesOf, groundOf, type RunGround, runSummary } from './runs';

@@ -9,7 +9,7 @@ import { person } from '../db/schema/people';
 import { reading, run, runFile, runStep } from '../db/schema/runs';
 import { notFound } from '../http';
 import type { Insider } from './insider';
-import { idFrom, storedLayout } from './machines';
+import { idFrom, storedLayout } from './machine-hold';
 
 type RunRow = typeof run.$inferSelect;
 type StepRow = typeof runStep.$inferSelect;

@@ -13,7 +13,6 @@ let app: TestApp;
 beforeAll(async () => {
   app = await startApp();
 });
-// biome-ignore lint/correctness/useHookAtTopLevel: no hook of React, a browser for the tests of this file.
 const browser = useBrowser();
 
 /** The home page once its machine can be worked. */

@@ -13,7 +13,6 @@ const SHORT: Partial<Record<Command, string>> = {
   reverse: 'Reverse',
   'take-back': 'Take back',
   correct: 'Correct',
-
   add: 'Add',
   subtract: 'Subtract',
   times: 'Times',

@@ -1,4 +1,5 @@
 import './ladder.css';
+import './marks.css';
 import {
   type KeyboardEvent,
   type MouseEvent,

@@ -80,7 +80,7 @@ export function EntryLine(props: Props): ReactElement {
           autoCapitalize="off"
           spellCheck={false}
           maxLength={entry.asking === 'note' ? 500 : 200}
-          placeholder={reading ? (layout.counterWheels > 0 ? 'result / counter' : 'result') : LINE_LABELS[entry.asking]}
+          placeholder={reading ? 'reading' : LINE_LABELS[entry.asking]}
           aria-invalid={entry.wrong || undefined}
           aria-describedby={`${id}-said`}
           className="h-14 w-0 min-w-28 flex-1 border-2 border-ink bg-leaf px-3 text-2xl placeholder:text-base placeholder:text-ink-soft aria-invalid:border-vermilion"

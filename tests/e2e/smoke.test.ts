@@ -1,4 +1,5 @@
 import { gzipSync } from 'node:zlib';
+import { AxeBuilder } from '@axe-core/playwright';
 import { newPerson, newWorkshop, startApp, TEST_PASSWORD, type TestApp, type TestPerson } from '@tests/helpers/app';
 import { useBrowser } from '@tests/helpers/browser';
 import type { Page } from 'playwright-core';
@@ -8,7 +9,9 @@ const browser = useBrowser();
 let app: TestApp;
 let tester: TestPerson;
 let stranger: TestPerson;
+let viewer: TestPerson;
 let machine = '';
+const TAGS = ['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa'];
 
 /** The lowest slide at 7, nine turns; at turn 5 the carry into wheel 2 is missed, and what follows goes on from there. */
 const READ = ['7', '14', '21', '28', '25', '32', '39', '46', '53'];
@@ -17,6 +20,7 @@ beforeAll(async () => {
   app = await startApp();
   const lead = await newWorkshop(app, 'Tidewater bench');
   tester = await newPerson(app, lead, 'tester');
+  viewer = await newPerson(app, lead, 'viewer');
   stranger = await newPerson(app, await newWorkshop(app, 'Next door'), 'tester');
   const made = await lead.visitor.send('POST', '/api/v1/machines', { name: 'Plover' });
   machine = ((await made.json()) as { id: string }).id;
@@ -28,6 +32,14 @@ async function signIn(page: Page, email: string): Promise<void> {
   await page.fill('[name=password]', TEST_PASSWORD);
   await page.keyboard.press('Enter');
   await page.waitForURL(/\/machines$/);
+}
+
+/** A window of somebody who has signed in already; only the first test does it by hand. */
+async function openAs(person: TestPerson): Promise<Page> {
+  const page = await browser.open();
+  const cookies = [...person.visitor.cookies].map(([name, value]) => ({ name, value, url: app.url }));
+  await page.context().addCookies(cookies);
+  return page;
 }
 
 async function startRun(page: Page, title: string): Promise<string> {
@@ -80,8 +92,7 @@ describe('the smoke test at the bench', () => {
   });
 
   it('takes result and counter one by one, corrects, takes back, and finishes with a summary', async () => {
-    const page = await browser.open();
-    await signIn(page, tester.email);
+    const page = await openAs(tester);
     await startRun(page, 'By and by');
     await page.keyboard.type('s7\n7\n1\n14\n2\n12\n3\n');
     await saved(page);
@@ -109,8 +120,7 @@ describe('the smoke test at the bench', () => {
   });
 
   it('loses nothing when the network goes, the page is loaded anew and the network comes back', async () => {
-    const page = await browser.open();
-    await signIn(page, tester.email);
+    const page = await openAs(tester);
     const address = await startRun(page, 'Out of reach');
     await page.route('**/steps', (route) => route.abort());
     await page.keyboard.type('s7\n7 1\n14 2\n');
@@ -126,8 +136,7 @@ describe('the smoke test at the bench', () => {
   });
 
   it('tells two tabs on one run apart and puts the later behind the earlier', async () => {
-    const page = await browser.open();
-    await signIn(page, tester.email);
+    const page = await openAs(tester);
     const address = await startRun(page, 'Two tabs');
     const second = await page.context().newPage();
     await second.goto(address);
@@ -142,9 +151,63 @@ describe('the smoke test at the bench', () => {
     expect(await flagged(second)).toEqual([]);
   });
 
+  it('keeps what is typed by somebody who was signed out meanwhile, and saves it after signing in again', async () => {
+    const page = await openAs(tester);
+    await startRun(page, 'Signed out');
+    await page.keyboard.type('s7\n');
+    await saved(page);
+    await page.context().clearCookies();
+    await page.keyboard.type('7 1\n14 2\n');
+    await page.getByText('You are signed out').waitFor();
+    expect(await page.textContent('[data-saving]')).toContain('2 steps kept on this device');
+    await signIn(await page.context().newPage(), tester.email);
+    await page.getByRole('button', { name: 'Try again' }).click();
+    await saved(page);
+    expect(await flagged(page)).toEqual([]);
+  });
+
+  it('shows a viewer the run without a line to type in', async () => {
+    const page = await openAs(tester);
+    const address = await startRun(page, 'Looked on');
+    const other = await openAs(viewer);
+    await other.goto(address);
+    await other.getByText('Nothing turned and nothing read yet.').waitFor();
+    expect(await other.locator('[aria-label=Entry]').count()).toBe(0);
+    expect(await other.getByRole('button', { name: 'Delete this empty run' }).count()).toBe(0);
+    expect((await other.goto(`${app.url}/runs/new`))?.status()).toBe(403);
+  });
+
+  it('deletes a run only while nothing was logged in it', async () => {
+    const page = await openAs(tester);
+    const address = await startRun(page, 'Begun by mistake');
+    await page.getByRole('button', { name: 'Delete this empty run' }).click();
+    await page.getByRole('button', { name: 'Delete run' }).click();
+    await page.waitForURL(/\/runs$/);
+    expect((await page.goto(address))?.status()).toBe(404);
+  });
+
+  it('has nothing for axe to find, in the line, its dialogs and the list', async () => {
+    const page = await openAs(tester);
+    await startRun(page, 'Looked through');
+    await page.keyboard.type('s7\n7 1\n15 2\n');
+    await saved(page);
+    const found = async (): Promise<string[]> =>
+      (await new AxeBuilder({ page }).withTags(TAGS).analyze()).violations.map(({ id }) => id);
+    expect(await found()).toEqual([]);
+    for (const key of ['k', 'e']) {
+      await page.keyboard.type(key);
+      await page.waitForSelector('dialog[open]');
+      expect(await found(), key).toEqual([]);
+      await page.keyboard.press('Escape');
+      await page.waitForSelector('dialog[open]', { state: 'detached' });
+    }
+    await page.goto(`${app.url}/runs?trouble=differs&sort=turns`);
+    expect(await page.locator('tbody tr').count()).toBeGreaterThan(0);
+    expect(await found()).toEqual([]);
+  });
+
   it('sends the run’s page less than 130 kB of script', async () => {
-    const page = await browser.open();
-    await signIn(page, tester.email);
+    const page = await openAs(tester);
     const address = await startRun(page, 'Weighed');
     const addresses = new Set<string>();
     page.on('response', (response) => {

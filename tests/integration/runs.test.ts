@@ -71,6 +71,9 @@ describe('a run', () => {
     expect((await append(run, 1, [first, second])).status).toBe(200);
     expect((await append(run, 1, [first, second])).status).toBe(200);
     expect((await shown(run)).entries.map(({ id }) => id)).toEqual([first.id, second.id]);
+    // An id stands for one step: something else under it is refused, never taken for the same.
+    const other = await append(run, 1, [{ ...first, step: { do: 'set', slides: '8' } }]);
+    expect(other.status).toBe(409);
   });
 
   it('lets one of two browsers have a number, and tells the other', async () => {
@@ -135,6 +138,7 @@ describe('a run', () => {
 
   it('is deleted only while empty, and takes nothing more once finished', async () => {
     const empty = await begin();
+    expect((await tester.visitor.send('POST', `/api/v1/runs/${empty}/finish`)).status).toBe(409);
     expect((await tester.visitor.send('DELETE', `/api/v1/runs/${empty}`)).status).toBe(204);
     expect((await tester.visitor.get(`/api/v1/runs/${empty}`)).status).toBe(404);
     const run = await begin();
@@ -212,6 +216,9 @@ describe('a run', () => {
     const stored = performance.now() - began;
     const before = performance.now();
     expect((await shown(run)).turns).toBe(10_000);
+    const over = await append(run, 10_001, [entry(TURN)]);
+    expect(over.status).toBe(409);
+    expect(((await over.json()) as { detail: string }).detail).toContain('10000 steps');
     expect(performance.now() - before).toBeLessThan(3000);
     expect(stored).toBeLessThan(45_000);
   });

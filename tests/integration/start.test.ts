@@ -56,9 +56,13 @@ afterAll(async () => {
     tries += 1
   )
     await sleep(100);
-  const data = path.join(clone, '.local', 'postgres', 'data', 'postmaster.pid');
-  if (existsSync(data)) process.kill(Number(readFileSync(data, 'utf8').split('\n')[0]), 'SIGINT');
-  for (let tries = 0; tries < 50 && existsSync(data); tries += 1) await sleep(100);
+  // Whatever went wrong above, no PostgreSQL of the clone is left behind; and nothing else is ever ended.
+  const file = path.join(clone, '.local', 'postgres', 'data', 'postmaster.pid');
+  const pid = existsSync(file) ? postgresPid() : 0;
+  const isOurs =
+    pid > 0 && existsSync(`/proc/${pid}/cmdline`) && readFileSync(`/proc/${pid}/cmdline`, 'utf8').includes(clone);
+  if (isOurs) process.kill(pid, 'SIGINT');
+  for (let tries = 0; isOurs && tries < 50 && existsSync(file); tries += 1) await sleep(100);
   rmSync(clone, { recursive: true, force: true });
 });
 

@@ -18,6 +18,8 @@ export const LIMITS = {
   /** Bytes and rows of one imported file. */
   importBytes: 1024 * 1024,
   importRows: 10_000,
+  /** Steps of one run; what the core's door and the file of a run take as well. */
+  runSteps: 10_000,
   nameLength: 80,
   noteLength: 500,
   runNoteLength: 2000,

@@ -92,7 +92,8 @@ export async function storeFile(
   machineId: string | undefined,
   given: GivenFile & { readonly sha256: string; readonly again: boolean; readonly title?: string | undefined },
 ): Promise<string> {
-  const held = await holdMachine(tx, who, machineId, 'share');
+  // Held alone, so that a file confirmed twice at the same moment is stored once.
+  const held = await holdMachine(tx, who, machineId, 'update');
   if (sha256Of(given.bytes) !== given.sha256)
     throw new Refusal(409, { detail: 'This is not the file that was checked. Check it again.' });
   const file = read(given.bytes, held);

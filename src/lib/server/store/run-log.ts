@@ -1,9 +1,11 @@
+import { isDeepStrictEqual } from 'node:util';
 import { and, desc, eq, inArray, isNull, max } from 'drizzle-orm';
 import { v7 } from 'uuid';
 import { acceptStart, acceptSteps, wheelsIn } from '@/lib/mechanism/accept';
 import type { Layout } from '@/lib/mechanism/layout';
 import { readGlyphs } from '@/lib/mechanism/registers';
 import { REGISTERS, type Reading, type Step } from '@/lib/mechanism/steps';
+import { LIMITS } from '@/lib/schemas/limits';
 import type { Append, Correction, Logged, NewEntry, NewRun, RunChange, RunEntry } from '@/lib/schemas/run-shapes';
 import type { RunSource } from '@/lib/schemas/runs';
 import type { Tx } from '../db/client';
@@ -103,8 +105,23 @@ async function nextSeq(tx: Tx, { row }: RunGround): Promise<number> {
   return (last?.seq ?? 0) + 1;
 }
 
-/** Which of these steps are stored already, and whether as the sender numbers them. */
-async function alreadyStored(tx: Tx, { row }: RunGround, sent: Append): Promise<Set<string>> {
+/** Whether what is sent under a known id is what is stored under it. */
+function isSame(layout: Layout, sent: NewEntry, stored: RunEntry): boolean {
+  const accepted = acceptSteps(layout, [sent.step]);
+  // A correction may have come since; then the first reading is what was sent.
+  const first = stored.corrections[0]?.was ?? stored.step.read;
+  const plain = ({ read: _, ...operation }: Step): unknown => operation;
+  return (
+    accepted.ok &&
+    accepted.value[0] !== undefined &&
+    isDeepStrictEqual(plain(accepted.value[0]), plain(stored.step)) &&
+    isDeepStrictEqual({ ...accepted.value[0].read }, { ...first }) &&
+    (sent.note ?? '') === stored.note
+  );
+}
+
+/** Which of these steps are stored already. 409 where an id stands for something else. */
+async function alreadyStored(tx: Tx, { row, layout }: RunGround, sent: Append): Promise<Set<string>> {
   const ids = sent.entries.map(({ id }) => id);
   const known = await tx
     .select({ id: runStep.id, runId: runStep.runId })
@@ -112,6 +129,13 @@ async function alreadyStored(tx: Tx, { row }: RunGround, sent: Append): Promise<
     .where(and(eq(runStep.workshopId, row.workshopId), inArray(runStep.id, ids)));
   if (known.some(({ runId }) => runId !== row.id))
     throw new Refusal(409, { detail: 'A step with this id belongs to another run.' });
+  if (known.length === 0) return new Set();
+  const stored = new Map((await entriesOf(tx, row.workshopId, row.id)).map((entry) => [entry.id, entry]));
+  for (const entry of sent.entries) {
+    const there = stored.get(entry.id);
+    if (there && !isSame(layout, entry, there))
+      throw new Refusal(409, { detail: `Another step is stored under the id of this one, as step ${there.seq}.` });
+  }
   return new Set(known.map(({ id }) => id));
 }
 
@@ -130,6 +154,8 @@ export async function appendSteps(tx: Tx, who: Insider, id: string | undefined, 
     const seq = await nextSeq(tx, ground);
     const expected = sent.seq + sent.entries.indexOf(fresh[0] as NewEntry);
     if (seq !== expected) throw await taken(tx, ground, seq, expected);
+    if (seq + fresh.length - 1 > LIMITS.runSteps)
+      throw new Refusal(409, { detail: `A run takes ${LIMITS.runSteps} steps. Finish this one and begin another.` });
     const accepted = acceptedEntries(layout, fresh);
     fresh.forEach(({ step }, index) => {
       remarks.push(...filledRemarks(layout, seq + index, step.read));
@@ -221,8 +247,11 @@ export async function correctReading(tx: Tx, who: Insider, id: string | undefine
 
 /** Ends a run; nothing more is added to it, readings can still be put right. Ending it again changes nothing. */
 export async function finishRun(tx: Tx, who: Insider, id: string | undefined, at = new Date()): Promise<void> {
-  const { row } = await groundOf(tx, who, id, true);
+  const ground = await groundOf(tx, who, id, true);
+  const { row } = ground;
   if (row.finishedAt) return;
+  if ((await nextSeq(tx, ground)) === 1)
+    throw new Refusal(409, { detail: 'Nothing has been logged in this run. Delete it instead.' });
   await tx
     .update(run)
     .set({ finishedAt: at, finishedBy: who.person.id })

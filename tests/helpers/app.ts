@@ -1,3 +1,5 @@
+import { rmSync, writeFileSync } from 'node:fs';
+import path from 'node:path';
 import { afterAll, inject } from 'vitest';
 import { freePort } from '@/cli/local/ports';
 import { type RunningServer, startServer } from '@/cli/local/server';
@@ -29,7 +31,12 @@ export async function startApp(environment: Record<string, string> = {}): Promis
     environment: { LOG_LEVEL: 'warn', ...environment },
     output: 'collect',
   });
-  afterAll(() => server.stop());
+  const note = path.join(inject('ground').servers, String(server.child.pid));
+  writeFileSync(note, '');
+  afterAll(async () => {
+    await server.stop();
+    rmSync(note, { force: true });
+  });
   return { url: server.url, database, server, visitor: () => new Visitor(server.url) };
 }
 

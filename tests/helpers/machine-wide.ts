@@ -1,10 +1,11 @@
-import { mkdtempSync, rmSync } from 'node:fs';
+import { mkdirSync, mkdtempSync, readdirSync, rmSync } from 'node:fs';
 import os from 'node:os';
 import path from 'node:path';
 import type { TestProject } from 'vitest/node';
 import { ensureBuild } from '@/cli/local/build';
 import { ensureDatabase, prepareFolder, startCluster } from '@/cli/local/cluster';
 import { ensureChromium, ensurePostgres } from '@/cli/local/debian';
+import { isAlive } from '@/cli/local/lock.mjs';
 import { MIGRATIONS } from '@/cli/local/places';
 import { migrateDatabase } from '@/lib/server/db/migrate';
 
@@ -15,6 +16,8 @@ export interface TestGround {
   readonly ownerUrl: string;
   readonly appUrl: string;
   readonly build: string;
+  /** Folder where workers note the servers they start, one file a process id. */
+  readonly servers: string;
 }
 
 declare module 'vitest' {
@@ -37,10 +40,14 @@ async function prepare(): Promise<{ ground: TestGround; end: () => void }> {
   const folder = mkdtempSync(path.join(os.tmpdir(), 'nineover-test-'));
   if (!prepareFolder(folder)) throw new Error(`PostgreSQL’s user cannot reach ${folder}.`);
   const cluster = await startCluster({ bin, folder, durable: false });
+  const servers = path.join(folder, 'servers');
+  mkdirSync(servers);
   let ended = false;
   const end = (): void => {
     if (ended) return;
     ended = true;
+    // A worker that was killed could not stop its servers.
+    for (const pid of readdirSync(servers).map(Number)) if (isAlive(pid)) process.kill(pid, 'SIGKILL');
     cluster.stop();
     rmSync(folder, { recursive: true, force: true });
   };
@@ -54,6 +61,7 @@ async function prepare(): Promise<{ ground: TestGround; end: () => void }> {
     ownerUrl: cluster.url('owner', 'NAME'),
     appUrl: cluster.url('app', 'NAME'),
     build,
+    servers,
   };
   return { ground, end };
 }

@@ -1,12 +1,24 @@
 import { spawn } from 'node:child_process';
 import { createHash } from 'node:crypto';
-import { existsSync, mkdirSync, readdirSync, readFileSync, renameSync, rmSync, statSync, utimesSync } from 'node:fs';
+import {
+  existsSync,
+  mkdirSync,
+  readdirSync,
+  readFileSync,
+  renameSync,
+  rmSync,
+  statSync,
+  utimesSync,
+  writeFileSync,
+} from 'node:fs';
 import path from 'node:path';
-import { locked } from './lock.mjs';
+import { isAlive, locked } from './lock.mjs';
 import { LOCAL, ROOT } from './places';
 
 const BUILDS = path.join(LOCAL, 'builds');
-const KEPT = 3;
+const HOLDERS = path.join(LOCAL, 'build-holders');
+/** Builds that no command has used for this long are let go; a server that runs longer holds its own. */
+const KEPT_HOURS = 24;
 const SOURCES = ['src', 'public', 'astro.config.mjs', 'package-lock.json', 'tsconfig.json'];
 
 function filesUnder(place: string): string[] {
@@ -46,6 +58,29 @@ function runBuild(outDir: string): Promise<string | null> {
   });
 }
 
+/** Builds that running servers serve from: pages are loaded from there when they are first asked for. */
+function buildsInUse(): Set<string> {
+  const holders = existsSync(HOLDERS) ? readdirSync(HOLDERS) : [];
+  const alive = holders.filter((pid) => isAlive(Number(pid)));
+  for (const pid of holders.filter((one) => !alive.includes(one))) rmSync(path.join(HOLDERS, pid), { force: true });
+  return new Set(alive.map((pid) => readFileSync(path.join(HOLDERS, pid), 'utf8')));
+}
+
+/** Notes that the server with this process id serves from a build, until it has ended. */
+export function holdBuild(folder: string, server: number): void {
+  mkdirSync(HOLDERS, { recursive: true });
+  writeFileSync(path.join(HOLDERS, String(server)), folder);
+}
+
+function pruneBuilds(): void {
+  const inUse = buildsInUse();
+  const oldest = Date.now() - KEPT_HOURS * 60 * 60 * 1000;
+  for (const name of readdirSync(BUILDS)) {
+    const build = path.join(BUILDS, name);
+    if (!inUse.has(build) && statSync(build).mtimeMs < oldest) rmSync(build, { recursive: true, force: true });
+  }
+}
+
 /**
  * The site built from the sources as they are now. Builds are kept by what they were made of, so that a running server
  * keeps its own files while another command builds newer ones.
@@ -63,12 +98,8 @@ export async function ensureBuild(): Promise<string> {
       if (failed !== null) throw new Error(`The build failed:\n${failed}`);
       renameSync(making, folder);
     });
-  // The newest use is kept longest.
   utimesSync(folder, new Date(), new Date());
-  const others = readdirSync(BUILDS)
-    .map((name) => path.join(BUILDS, name))
-    .sort((a, b) => statSync(b).mtimeMs - statSync(a).mtimeMs);
-  for (const old of others.slice(KEPT)) rmSync(old, { recursive: true, force: true });
+  pruneBuilds();
   return folder;
 }
 

@@ -1,6 +1,6 @@
 import { type ChildProcess, spawn } from 'node:child_process';
 import { setTimeout as sleep } from 'node:timers/promises';
-import { serverEntry } from './build';
+import { holdBuild, serverEntry } from './build';
 import { ROOT } from './places';
 
 export interface ServerOptions {
@@ -52,6 +52,7 @@ export async function startServer(options: ServerOptions): Promise<RunningServer
     // Ctrl-C reaches only the command, which then stops the server in its own order.
     detached: true,
   });
+  if (child.pid !== undefined) holdBuild(options.build, child.pid);
   child.stdout?.on('data', (part) => {
     written += part;
   });

@@ -121,7 +121,9 @@ export async function storeFile(
     createdBy: who.person.id,
   });
   await rewriteTallies(tx, await groundOf(tx, who, runId, true), await entriesOf(tx, who.workshop.id, runId));
-  await finishRun(tx, who, runId);
+  // It ended when its last step was made, if the file says so.
+  const last = times.at(-1);
+  await finishRun(tx, who, runId, last ? new Date(last) : undefined);
   return runId;
 }
 

@@ -61,7 +61,8 @@ async function answer(context: APIContext, next: MiddlewareNext): Promise<Respon
     if (error.status === 401) return context.redirect(paths.signIn(context.url.pathname + context.url.search), 303);
     if (error.status === 404) return new Response(null, { status: 404 });
     context.locals.refusal = { status: error.status, text: error.message };
-    return context.rewrite('/403');
+    // A request of its own: the body of the one that was refused may have been read already.
+    return context.rewrite(new Request(new URL('/403', context.url), { headers: context.request.headers }));
   }
 }
 

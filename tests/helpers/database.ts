@@ -32,12 +32,17 @@ async function asSuper(statement: string): Promise<void> {
   }
 }
 
+/** Takes a database away, whoever is connected to it. */
+export function dropDatabase(name: string): Promise<void> {
+  return asSuper(`drop database if exists ${name} with (force)`);
+}
+
 /** A migrated, empty database of this test file's own; dropped when the file ends. */
 export async function testDatabase(): Promise<TestDatabase> {
   const name = `t_${process.env.VITEST_POOL_ID ?? '0'}_${randomBytes(5).toString('hex')}`;
   await asSuper(`create database ${name} template ${TEMPLATE} owner nineover_owner`);
   const { appUrl, ownerUrl } = inject('ground');
-  afterAll(() => asSuper(`drop database if exists ${name} with (force)`));
+  afterAll(() => dropDatabase(name));
   return { name, url: named(appUrl, name), ownerUrl: named(ownerUrl, name) };
 }
 

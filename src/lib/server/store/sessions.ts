@@ -41,12 +41,13 @@ export interface SessionShown {
   readonly id: string;
   readonly createdAt: Date;
   readonly seenAt: Date;
-  readonly agent: string | null;
+  /** Network address it signed in from. */
+  readonly address: string | null;
 }
 
 export function listSessions(tx: Tx, personId: string): Promise<SessionShown[]> {
   return tx
-    .select({ id: session.id, createdAt: session.createdAt, seenAt: session.seenAt, agent: session.agent })
+    .select({ id: session.id, createdAt: session.createdAt, seenAt: session.seenAt, address: session.address })
     .from(session)
     .where(eq(session.personId, personId))
     .orderBy(desc(session.seenAt));

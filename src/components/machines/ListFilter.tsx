@@ -1,9 +1,11 @@
 import type { ReactElement } from 'react';
 import { Field, SelectField } from '@/components/ui/Field';
+import type { Change as ChangeOf } from '@/components/ui/useAddressView';
 import { paths } from '@/lib/paths';
 import { MACHINE_STATE_WORDS, MACHINE_STATES } from '@/lib/schemas/machines';
 import { type ListView, PLAIN_VIEW, readView, SIZES } from './list-view';
-import type { Change } from './useListView';
+
+type Change = ChangeOf<ListView>;
 
 const STATES = [
   { value: '', label: 'every state' },

@@ -1,14 +1,16 @@
 import type { Row } from '@tanstack/react-table';
 import type { ReactElement } from 'react';
+import { isPlainClick } from '@/components/ui/ListPages';
 import { Tag } from '@/components/ui/Tag';
+import type { Change as ChangeOf } from '@/components/ui/useAddressView';
 import { paths } from '@/lib/paths';
 import { MACHINE_STATE_WORDS } from '@/lib/schemas/machines';
 import { COLUMNS, FALLING_FIRST, FIGURES } from './columns';
-import { isPlainClick } from './ListPages';
 import type { ListRow } from './list-row';
 import { type ListView, type Sort, writeView } from './list-view';
-import type { Change } from './useListView';
 import { countWords } from './words';
+
+type Change = ChangeOf<ListView>;
 
 interface Props {
   readonly rows: readonly Row<ListRow>[];

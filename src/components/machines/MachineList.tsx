@@ -7,13 +7,14 @@ import {
   useReactTable,
 } from '@tanstack/react-table';
 import type { ReactElement } from 'react';
+import { ListPages } from '@/components/ui/ListPages';
+import { useAddressView } from '@/components/ui/useAddressView';
+import { paths } from '@/lib/paths';
 import { byWords, COLUMNS } from './columns';
 import { ListFilter } from './ListFilter';
-import { ListPages } from './ListPages';
 import { ListTable } from './ListTable';
 import type { ListRow } from './list-row';
-import type { ListView } from './list-view';
-import { useListView } from './useListView';
+import { type ListView, readView, writeView } from './list-view';
 import { counted } from './words';
 
 interface Props {
@@ -21,6 +22,8 @@ interface Props {
   /** The address's question, as the server got it. */
   readonly search: string;
 }
+
+const VIEW = { read: readView, write: writeView };
 
 function useMachineTable(rows: readonly ListRow[], view: ListView): Table<ListRow> {
   return useReactTable({
@@ -48,7 +51,7 @@ function useMachineTable(rows: readonly ListRow[], view: ListView): Table<ListRo
  * form and links, so that the server draws the same list for a browser that runs no script.
  */
 export function MachineList({ rows, search }: Props): ReactElement {
-  const [asked, change] = useListView(search);
+  const [asked, change] = useAddressView(search, VIEW);
   const found = useMachineTable(rows, asked).getFilteredRowModel().rows.length;
   const pages = Math.max(1, Math.ceil(found / asked.size));
   const view = { ...asked, page: Math.min(asked.page, pages) };
@@ -69,7 +72,14 @@ export function MachineList({ rows, search }: Props): ReactElement {
           </button>
         </p>
       )}
-      <ListPages view={view} pages={pages} change={change} />
+      {pages > 1 && (
+        <ListPages
+          page={view.page}
+          pages={pages}
+          addressOf={(page) => `${paths.machines}${writeView({ ...view, page })}`}
+          onPage={(page) => change({ page })}
+        />
+      )}
     </div>
   );
 }

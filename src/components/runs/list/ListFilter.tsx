@@ -1,9 +1,11 @@
 import type { ReactElement } from 'react';
 import { Field, SelectField } from '@/components/ui/Field';
+import type { Change as ChangeOf } from '@/components/ui/useAddressView';
 import { paths } from '@/lib/paths';
 import { RUN_STATE_WORDS, RUN_STATES, TROUBLE_WORDS, TROUBLES } from './list-row';
 import { type ListView, PLAIN_VIEW, readView } from './list-view';
-import type { Change } from './useListView';
+
+type Change = ChangeOf<ListView>;
 
 const STATES = [{ value: '', label: 'going on or finished' }].concat(
   RUN_STATES.map((state) => ({ value: state, label: RUN_STATE_WORDS[state] })),

@@ -1,13 +1,15 @@
 import type { Row } from '@tanstack/react-table';
 import type { ReactElement, ReactNode } from 'react';
 import { countWords } from '@/components/machines/words';
+import { isPlainClick } from '@/components/ui/ListPages';
 import { Tag } from '@/components/ui/Tag';
+import type { Change as ChangeOf } from '@/components/ui/useAddressView';
 import { paths } from '@/lib/paths';
 import { COLUMNS, FALLING_FIRST, FIGURES } from './columns';
-import { isPlainClick } from './ListPages';
 import type { ListRow } from './list-row';
 import { type ListView, type Sort, writeView } from './list-view';
-import type { Change } from './useListView';
+
+type Change = ChangeOf<ListView>;
 
 interface HeadProps {
   readonly id: Sort;

@@ -8,13 +8,13 @@ import {
 } from '@tanstack/react-table';
 import type { ReactElement } from 'react';
 import { counted } from '@/components/machines/words';
+import { useAddressView } from '@/components/ui/useAddressView';
 import { byWords, COLUMNS } from './columns';
 import { ListFilter } from './ListFilter';
-import { ListPages } from './ListPages';
+import { ListFoot } from './ListFoot';
 import { ListTable } from './ListTable';
 import type { ListRow } from './list-row';
-import { type ListView, PLAIN_VIEW } from './list-view';
-import { useListView } from './useListView';
+import { type ListView, PLAIN_VIEW, readView, writeView } from './list-view';
 
 interface Props {
   readonly rows: readonly ListRow[];
@@ -22,6 +22,8 @@ interface Props {
   /** The address's question, as the server got it. */
   readonly search: string;
 }
+
+const VIEW = { read: readView, write: writeView };
 
 /** What a row must be, beside the words typed; these choices have no columns of their own. */
 function chosen(rows: readonly ListRow[], { machine, state, trouble }: ListView): ListRow[] {
@@ -63,7 +65,7 @@ function useRunTable(rows: ListRow[], view: ListView): Table<ListRow> {
  * links, so that the server draws the same list for a browser that runs no script.
  */
 export function RunList({ rows, machines, search }: Props): ReactElement {
-  const [asked, change] = useListView(search);
+  const [asked, change] = useAddressView(search, VIEW);
   const data = chosen(rows, asked);
   const found = useRunTable(data, asked).getFilteredRowModel().rows.length;
   const pages = Math.max(1, Math.ceil(found / asked.size));
@@ -85,7 +87,7 @@ export function RunList({ rows, machines, search }: Props): ReactElement {
           </button>
         </p>
       )}
-      <ListPages view={view} pages={pages} change={change} />
+      <ListFoot view={view} pages={pages} change={change} />
     </div>
   );
 }

@@ -1,9 +1,8 @@
 import {
   getCoreRowModel,
   getFilteredRowModel,
-  getPaginationRowModel,
   getSortedRowModel,
-  type Table,
+  type Row,
   useReactTable,
 } from '@tanstack/react-table';
 import type { ReactElement } from 'react';
@@ -25,8 +24,9 @@ interface Props {
 
 const VIEW = { read: readView, write: writeView };
 
-function useMachineTable(rows: readonly ListRow[], view: ListView): Table<ListRow> {
-  return useReactTable({
+/** The rows that the view leaves, in its order. */
+function useRows(rows: readonly ListRow[], view: ListView): readonly Row<ListRow>[] {
+  const table = useReactTable({
     data: rows as ListRow[],
     columns: COLUMNS,
     getRowId: (row) => row.id,
@@ -34,16 +34,14 @@ function useMachineTable(rows: readonly ListRow[], view: ListView): Table<ListRo
       sorting: [{ id: view.sort, desc: view.falling }],
       globalFilter: view.text.trim(),
       columnFilters: view.state ? [{ id: 'state', value: view.state }] : [],
-      pagination: { pageIndex: view.page - 1, pageSize: view.size },
     },
     globalFilterFn: byWords,
     getColumnCanGlobalFilter: (column) => column.id === 'name',
-    autoResetPageIndex: false,
     getCoreRowModel: getCoreRowModel(),
     getFilteredRowModel: getFilteredRowModel(),
     getSortedRowModel: getSortedRowModel(),
-    getPaginationRowModel: getPaginationRowModel(),
   });
+  return table.getSortedRowModel().rows;
 }
 
 /**
@@ -52,18 +50,20 @@ function useMachineTable(rows: readonly ListRow[], view: ListView): Table<ListRo
  */
 export function MachineList({ rows, search }: Props): ReactElement {
   const [asked, change] = useAddressView(search, VIEW);
-  const found = useMachineTable(rows, asked).getFilteredRowModel().rows.length;
-  const pages = Math.max(1, Math.ceil(found / asked.size));
+  const found = useRows(rows, asked);
+  const pages = Math.max(1, Math.ceil(found.length / asked.size));
   const view = { ...asked, page: Math.min(asked.page, pages) };
-  const table = useMachineTable(rows, view);
+  const shown = found.slice((view.page - 1) * view.size, view.page * view.size);
   return (
     <div className="grid gap-6">
       <ListFilter view={view} change={change} />
       <p role="status" className="text-sm text-ink-soft">
-        {found === rows.length ? counted(found, 'machine') : `${found} of ${counted(rows.length, 'machine')}`}
+        {found.length === rows.length
+          ? counted(rows.length, 'machine')
+          : `${found.length} of ${counted(rows.length, 'machine')}`}
       </p>
-      {found > 0 ? (
-        <ListTable rows={table.getRowModel().rows} view={view} change={change} />
+      {shown.length > 0 ? (
+        <ListTable rows={shown} view={view} change={change} />
       ) : (
         <p className="border border-dashed border-rule-firm px-5 py-8">
           No machine is like that.{' '}

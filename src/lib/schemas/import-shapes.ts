@@ -4,7 +4,7 @@ import { LINE_ENDS } from '@/lib/interchange/csv-table';
 import { momentSchema } from './run-shapes';
 import { stepSchema } from './steps';
 
-/** A file as it was understood; nothing is stored. May be stored where `problems` is empty. */
+/** A file as it was understood; nothing is stored. May be stored where it has rows and no problem. */
 export const checkedFileSchema = z
   .object({
     name: z.string(),

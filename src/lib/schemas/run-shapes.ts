@@ -8,6 +8,8 @@ import { placeSchema, readingSchema, startSchema, stepSchema } from './steps';
 
 /** Most steps appended in one call; longer runs come in several. */
 export const MOST_APPENDED = 500;
+/** Runs of one answer, at most. */
+export const MOST_LISTED = 1000;
 const MOST_SEQ = 2 ** 31 - 1;
 
 const OBJECT = { error: 'Give an object.' };
@@ -162,6 +164,17 @@ export const runSchema = z
   })
   .meta({ id: 'Run', description: 'A run with all its steps.' });
 export type RunShown = z.infer<typeof runSchema>;
+
+/** Which runs a list is to hold. */
+export const runQuerySchema = z.strictObject({
+  machine: uuid.optional().meta({ description: 'Runs of this machine only.' }),
+  before: uuid.optional().meta({ description: 'The `next` of the answer before.' }),
+  limit: z.coerce
+    .number()
+    .pipe(wholeNumber(1, MOST_LISTED))
+    .optional()
+    .meta({ description: `Runs of one answer; ${MOST_LISTED} when left out.` }),
+});
 
 /** A page of runs, latest first; `next` goes on as `before` where there are more. */
 export const runListSchema = z.object({ runs: z.array(runSummarySchema), next: z.uuid().nullable() });

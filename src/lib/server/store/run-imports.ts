@@ -5,6 +5,7 @@ import { type RunFile, readRunCsv } from '@/lib/interchange/csv-read';
 import { writeRunCsv } from '@/lib/interchange/csv-write';
 import { decodeCsv } from '@/lib/interchange/decode';
 import type { CheckedFile } from '@/lib/schemas/import-shapes';
+import { LIMITS } from '@/lib/schemas/limits';
 import { remarkInWords, wordsOf } from '@/lib/schemas/words';
 import type { Tx } from '../db/client';
 import { machine } from '../db/schema/machines';
@@ -82,6 +83,21 @@ export async function checkFile(
   return { name: given.name, sha256, already: await earlierRun(tx, who, sha256), ...shown(read(given.bytes, held)) };
 }
 
+/** What a run from a file is called when nobody says: as the file, without its ending. */
+function titleFrom(name: string): string {
+  return [...name.replace(/\.[^.]*$/u, '')].slice(0, LIMITS.nameLength).join('').trim();
+}
+
+/**
+ * When the run of a file began and ended: with its first and last step, if the file says so. A clock that ran ahead does
+ * not put the run into the future.
+ */
+function sittingOf({ rows }: RunFile, now: Date): { startedAt: Date; finishedAt: Date } {
+  const told = rows.flatMap(({ step }) => (step.at ? [step.at.instant] : [])).sort();
+  const past = (instant = now.toISOString()): Date => (instant < now.toISOString() ? new Date(instant) : now);
+  return { startedAt: past(told[0]), finishedAt: past(told.at(-1)) };
+}
+
 /**
  * Stores a checked file as a finished run, all of it or nothing. `sha256` is what the check answered, so that what is
  * stored is what was seen. Answers with the run's id.
@@ -101,12 +117,12 @@ export async function storeFile(
     throw new Refusal(400, { detail: 'The file has problems, or no row; nothing was stored. Check it again.' });
   const earlier = given.again ? null : await earlierRun(tx, who, given.sha256);
   if (earlier) throw new Refusal(409, { detail: `The same file was imported already, as run ${earlier.number}.` });
-  const times = file.rows.flatMap(({ step }) => (step.at ? [step.at.instant] : [])).sort();
+  const { startedAt, finishedAt } = sittingOf(file, new Date());
   const runId = await startRun(tx, who, {
     machine: held.id,
-    title: given.title ?? given.name.replace(/\.[^.]*$/, '').slice(0, 80),
+    title: given.title ?? titleFrom(given.name),
     source: 'file',
-    startedAt: times[0] ? new Date(times[0]) : undefined,
+    startedAt,
   });
   const whose = { workshopId: who.workshop.id, runId, recordedBy: who.person.id };
   const rows = file.rows.map(({ step: { at, note, ...step } }) => ({ id: v7(), step, note, at }));
@@ -115,15 +131,13 @@ export async function storeFile(
   await tx.insert(runFile).values({
     workshopId: who.workshop.id,
     runId,
-    name: name.slice(0, 255),
+    name,
     sha256,
     content: bytes,
     createdBy: who.person.id,
   });
   await rewriteTallies(tx, await groundOf(tx, who, runId, true), await entriesOf(tx, who.workshop.id, runId));
-  // It ended when its last step was made, if the file says so.
-  const last = times.at(-1);
-  await finishRun(tx, who, runId, last ? new Date(last) : undefined);
+  await finishRun(tx, who, runId, finishedAt);
   return runId;
 }
 

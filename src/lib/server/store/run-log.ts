@@ -1,26 +1,21 @@
-import { isDeepStrictEqual } from 'node:util';
 import { and, desc, eq, inArray, isNull, max } from 'drizzle-orm';
 import { v7 } from 'uuid';
-import { acceptStart, acceptSteps, wheelsIn } from '@/lib/mechanism/accept';
-import type { Layout } from '@/lib/mechanism/layout';
-import { readGlyphs } from '@/lib/mechanism/registers';
-import { REGISTERS, type Reading, type Step } from '@/lib/mechanism/steps';
+import { acceptStart } from '@/lib/mechanism/accept';
 import { LIMITS } from '@/lib/schemas/limits';
-import type { Append, Correction, Logged, NewEntry, NewRun, RunChange, RunEntry } from '@/lib/schemas/run-shapes';
+import type { Append, Logged, NewRun, RunChange } from '@/lib/schemas/run-shapes';
 import type { RunSource } from '@/lib/schemas/runs';
 import type { Tx } from '../db/client';
 import { workshop } from '../db/schema/people';
-import { reading, run, runStep } from '../db/schema/runs';
+import { run, runStep } from '../db/schema/runs';
 import { admitted } from '../doors';
 import { notFound, Refusal } from '../http';
 import { openExclusions } from './exclusions';
 import type { Insider } from './insider';
 import { holdMachine } from './machine-hold';
+import { acceptedEntries, isSame } from './run-doors';
+import { logged } from './run-judged';
 import { insertSteps, type RowToAdd } from './run-rows';
-import { rewriteTallies } from './run-tallies';
-import { entriesOf, groundOf, type RunGround, runSummary } from './runs';
-
-type Remark = Logged['remarks'][number];
+import { entriesOf, groundOf, type RunGround } from './runs';
 
 /** Begins a run on the machine's layout and exclusions as they are now; answers with its id. */
 export async function startRun(
@@ -53,8 +48,8 @@ export async function startRun(
     source: made.source ?? 'hand',
     testerId: who.person.id,
     zone: made.zone ?? home?.zone ?? 'UTC',
-    startResult: start.result ?? null,
-    startCounter: start.counter ?? null,
+    startResult: start.result || null,
+    startCounter: start.counter || null,
     excluded: await openExclusions(tx, who, held.id),
     ...(made.startedAt ? { startedAt: made.startedAt } : {}),
   });
@@ -64,39 +59,6 @@ export async function startRun(
 const finished = (): Refusal =>
   new Refusal(409, { detail: 'This run is finished; nothing can be added to it. Begin a new one.' });
 
-/** Zeros that were filled in on the left, to be told: a reading is never changed in silence. */
-function filledRemarks(layout: Layout, seq: number, read: Reading | undefined): Remark[] {
-  return REGISTERS.flatMap((register) => {
-    const text = read?.[register];
-    const glyphs = text === undefined ? null : readGlyphs(text, wheelsIn(layout, register));
-    if (!glyphs?.ok || glyphs.value.filled === 0) return [];
-    const { filled } = glyphs.value;
-    return [{ seq, register, what: `${filled} ${filled === 1 ? 'zero was' : 'zeros were'} filled in on the left.` }];
-  });
-}
-
-/** Steps through the core's door: canonical glyphs, full width. */
-function acceptedEntries(layout: Layout, entries: readonly NewEntry[]): RowToAdd[] {
-  const steps = entries.map(({ step }) => step);
-  const result = acceptSteps(layout, steps, ['entries']);
-  // The door speaks of a list of steps; in this body each stands one level deeper.
-  const accepted = admitted(
-    result.ok
-      ? result
-      : {
-          ok: false,
-          problems: result.problems.map((problem) => {
-            const [list, index, ...rest] = problem.path;
-            return {
-              ...problem,
-              path: index === undefined ? problem.path : [list ?? 'entries', index, 'step', ...rest],
-            };
-          }),
-        },
-  );
-  return entries.map((entry, index) => ({ ...entry, step: accepted[index] as Step }));
-}
-
 async function nextSeq(tx: Tx, { row }: RunGround): Promise<number> {
   const [last] = await tx
     .select({ seq: max(runStep.seq) })
@@ -105,24 +67,9 @@ async function nextSeq(tx: Tx, { row }: RunGround): Promise<number> {
   return (last?.seq ?? 0) + 1;
 }
 
-/** Whether what is sent under a known id is what is stored under it. */
-function isSame(layout: Layout, sent: NewEntry, stored: RunEntry): boolean {
-  const accepted = acceptSteps(layout, [sent.step]);
-  // A correction may have come since; then the first reading is what was sent.
-  const first = stored.corrections[0]?.was ?? stored.step.read;
-  const plain = ({ read: _, ...operation }: Step): unknown => operation;
-  return (
-    accepted.ok &&
-    accepted.value[0] !== undefined &&
-    isDeepStrictEqual(plain(accepted.value[0]), plain(stored.step)) &&
-    isDeepStrictEqual({ ...accepted.value[0].read }, { ...first }) &&
-    (sent.note ?? '') === stored.note
-  );
-}
-
 /** Which of these steps are stored already. 409 where an id stands for something else. */
-async function alreadyStored(tx: Tx, { row, layout }: RunGround, sent: Append): Promise<Set<string>> {
-  const ids = sent.entries.map(({ id }) => id);
+async function alreadyStored(tx: Tx, { row }: RunGround, sent: readonly RowToAdd[]): Promise<Set<string>> {
+  const ids = sent.map(({ id }) => id);
   const known = await tx
     .select({ id: runStep.id, runId: runStep.runId })
     .from(runStep)
@@ -131,12 +78,22 @@ async function alreadyStored(tx: Tx, { row, layout }: RunGround, sent: Append): 
     throw new Refusal(409, { detail: 'A step with this id belongs to another run.' });
   if (known.length === 0) return new Set();
   const stored = new Map((await entriesOf(tx, row.workshopId, row.id)).map((entry) => [entry.id, entry]));
-  for (const entry of sent.entries) {
+  for (const entry of sent) {
     const there = stored.get(entry.id);
-    if (there && !isSame(layout, entry, there))
+    if (there && !isSame(entry, there))
       throw new Refusal(409, { detail: `Another step is stored under the id of this one, as step ${there.seq}.` });
   }
   return new Set(known.map(({ id }) => id));
+}
+
+async function addFresh(tx: Tx, who: Insider, ground: RunGround, from: number, fresh: RowToAdd[]): Promise<void> {
+  const { row } = ground;
+  if (row.finishedAt) throw finished();
+  const seq = await nextSeq(tx, ground);
+  if (seq !== from) throw await taken(tx, ground, seq, from);
+  if (seq + fresh.length - 1 > LIMITS.runSteps)
+    throw new Refusal(409, { detail: `A run takes ${LIMITS.runSteps} steps. Finish this one and begin another.` });
+  await insertSteps(tx, { workshopId: row.workshopId, runId: row.id, recordedBy: who.person.id }, seq, fresh);
 }
 
 /**
@@ -145,24 +102,12 @@ async function alreadyStored(tx: Tx, { row, layout }: RunGround, sent: Append): 
  */
 export async function appendSteps(tx: Tx, who: Insider, id: string | undefined, sent: Append): Promise<Logged> {
   const ground = await groundOf(tx, who, id, true);
-  const { row, layout } = ground;
-  const known = await alreadyStored(tx, ground, sent);
-  const fresh = sent.entries.filter((entry) => !known.has(entry.id));
-  const remarks: Remark[] = [];
-  if (fresh.length > 0) {
-    if (row.finishedAt) throw finished();
-    const seq = await nextSeq(tx, ground);
-    const expected = sent.seq + sent.entries.indexOf(fresh[0] as NewEntry);
-    if (seq !== expected) throw await taken(tx, ground, seq, expected);
-    if (seq + fresh.length - 1 > LIMITS.runSteps)
-      throw new Refusal(409, { detail: `A run takes ${LIMITS.runSteps} steps. Finish this one and begin another.` });
-    const accepted = acceptedEntries(layout, fresh);
-    fresh.forEach(({ step }, index) => {
-      remarks.push(...filledRemarks(layout, seq + index, step.read));
-    });
-    await insertSteps(tx, { workshopId: row.workshopId, runId: row.id, recordedBy: who.person.id }, seq, accepted);
-  }
-  return logged(tx, who, ground, remarks, (entry) => sent.entries.some(({ id: one }) => one === entry.id));
+  const accepted = acceptedEntries(ground.layout, sent.entries);
+  const known = await alreadyStored(tx, ground, accepted);
+  const first = accepted.findIndex((entry) => !known.has(entry.id));
+  const fresh = accepted.filter((entry) => !known.has(entry.id));
+  if (fresh.length > 0) await addFresh(tx, who, ground, sent.seq + first, fresh);
+  return logged(tx, who, ground, new Map(sent.entries.map(({ id: one, step }) => [one, step.read])));
 }
 
 async function taken(tx: Tx, ground: RunGround, next: number, expected: number): Promise<Refusal> {
@@ -173,19 +118,6 @@ async function taken(tx: Tx, ground: RunGround, next: number, expected: number):
   return new Refusal(409, {
     detail: `Step ${expected} has been logged already${by}, from another browser or tab. The run stands at step ${next - 1}.`,
   });
-}
-
-/** Judges the run anew, keeps its tallies, and answers with the steps concerned. */
-async function logged(
-  tx: Tx,
-  who: Insider,
-  ground: RunGround,
-  remarks: Remark[],
-  concerns: (entry: RunEntry) => boolean,
-): Promise<Logged> {
-  const entries = await entriesOf(tx, ground.row.workshopId, ground.row.id);
-  await rewriteTallies(tx, ground, entries);
-  return { run: await runSummary(tx, who, ground.row.id), entries: entries.filter(concerns), remarks };
 }
 
 /** Takes the last standing step back: it stays in sight, marked, and is not judged. */
@@ -201,7 +133,7 @@ export async function takeBack(
   if (row.finishedAt) throw finished();
   const ofRun = and(eq(runStep.workshopId, row.workshopId), eq(runStep.runId, row.id));
   const [last] = await tx
-    .select({ seq: runStep.seq })
+    .select({ id: runStep.id, seq: runStep.seq })
     .from(runStep)
     .where(and(ofRun, isNull(runStep.withdrawnAt)))
     .orderBy(desc(runStep.seq))
@@ -213,36 +145,7 @@ export async function takeBack(
     .update(runStep)
     .set({ withdrawnAt: new Date(), withdrawnBy: who.person.id, withdrawnReason: reason })
     .where(and(ofRun, eq(runStep.seq, seq)));
-  return logged(tx, who, ground, [], (entry) => entry.seq === seq);
-}
-
-/** Puts a reading right, or adds one where there was none; what stood there before stays in sight. */
-export async function correctReading(tx: Tx, who: Insider, id: string | undefined, sent: Correction): Promise<Logged> {
-  const ground = await groundOf(tx, who, id, true);
-  const { row, layout } = ground;
-  const entry = (await entriesOf(tx, row.workshopId, row.id)).find(({ seq }) => seq === sent.seq);
-  if (!entry || entry.withdrawn) throw notFound('There is no such step, or it has been taken back.');
-  if (sent.replaces !== undefined && sent.replaces !== entry.readingId)
-    throw new Refusal(409, { detail: 'This reading has been corrected by somebody else meanwhile. Look at it again.' });
-  if (entry.readingId && !sent.reason)
-    throw new Refusal(400, {
-      detail: 'Some fields are not as expected.',
-      errors: [{ pointer: '/reason', detail: 'Say why; both readings stay with the run.' }],
-    });
-  const { read: _, ...operation } = entry.step;
-  const [accepted] = admitted(acceptSteps(layout, [{ ...operation, read: sent.reading }], ['reading']));
-  await tx.insert(reading).values({
-    workshopId: row.workshopId,
-    id: v7(),
-    runId: row.id,
-    seq: sent.seq,
-    result: accepted?.read?.result,
-    counter: accepted?.read?.counter,
-    recordedBy: who.person.id,
-    replaces: entry.readingId,
-    reason: entry.readingId ? sent.reason : null,
-  });
-  return logged(tx, who, ground, filledRemarks(layout, sent.seq, sent.reading), ({ seq }) => seq === sent.seq);
+  return logged(tx, who, ground, new Map([[last.id, undefined]]));
 }
 
 /** Ends a run; nothing more is added to it, readings can still be put right. Ending it again changes nothing. */

@@ -1,5 +1,5 @@
 import { v7 } from 'uuid';
-import type { Operation, Step } from '@/lib/mechanism/steps';
+import { type Operation, REGISTERS, type Reading, type Step } from '@/lib/mechanism/steps';
 import type { NewEntry, RunMoment } from '@/lib/schemas/run-shapes';
 import type { Tx } from '../db/client';
 import { reading, runStep } from '../db/schema/runs';
@@ -24,6 +24,15 @@ function columnsOf(operation: Operation) {
 
 function momentColumns(at: RunMoment | null | undefined) {
   return at ? { at: new Date(at.instant), atOffset: at.offsetMinutes } : {};
+}
+
+/**
+ * An accepted reading as its columns hold it; null where nothing was read at all. A machine without a counter shows
+ * nothing there, so that an empty text is no reading of it.
+ */
+export function readingColumns(read: Reading | undefined): { result: string | null; counter: string | null } | null {
+  const [result = null, counter = null] = REGISTERS.map((register) => read?.[register] || null);
+  return result === null && counter === null ? null : { result, counter };
 }
 
 /** An accepted step on its way into the table. */
@@ -51,11 +60,10 @@ export async function insertSteps(tx: Tx, whose: Whose, seq: number, added: read
         ...momentColumns(at),
       })),
     );
-    const readings = part.flatMap(({ step }, index) =>
-      step.read && (step.read.result !== undefined || step.read.counter !== undefined)
-        ? [{ ...whose, id: v7(), seq: seq + from + index, result: step.read.result, counter: step.read.counter }]
-        : [],
-    );
+    const readings = part.flatMap(({ step }, index) => {
+      const read = readingColumns(step.read);
+      return read ? [{ ...whose, id: v7(), seq: seq + from + index, ...read }] : [];
+    });
     if (readings.length > 0) await tx.insert(reading).values(readings);
   }
 }

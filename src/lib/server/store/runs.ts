@@ -1,8 +1,15 @@
-import { and, asc, desc, eq, lt } from 'drizzle-orm';
+import { and, asc, desc, eq, getTableColumns, lt, sql } from 'drizzle-orm';
 import type { Layout } from '@/lib/mechanism/layout';
 import type { Operation, Reading, Step } from '@/lib/mechanism/steps';
 import { layoutFields } from '@/lib/schemas/layout';
-import type { RunEntry, RunList, RunMoment, RunShown, RunSummary } from '@/lib/schemas/run-shapes';
+import {
+  MOST_LISTED,
+  type RunEntry,
+  type RunList,
+  type RunMoment,
+  type RunShown,
+  type RunSummary,
+} from '@/lib/schemas/run-shapes';
 import type { Tx } from '../db/client';
 import { machine, machineLayout } from '../db/schema/machines';
 import { person } from '../db/schema/people';
@@ -12,11 +19,15 @@ import type { Insider } from './insider';
 import { idFrom, storedLayout } from './machine-hold';
 
 type RunRow = typeof run.$inferSelect;
-type StepRow = typeof runStep.$inferSelect;
+type StepRow = typeof runStep.$inferSelect & { readonly instant: string | null };
 type ReadingRow = typeof reading.$inferSelect;
 
-/** Runs of one call; a workshop's pages ask again for older ones. */
-const PAGE = 1000;
+export interface RunQuery {
+  readonly machine?: string | undefined;
+  /** Id of the run after which the list goes on: the `next` of the answer before. */
+  readonly before?: string | undefined;
+  readonly limit?: number | undefined;
+}
 
 const runWithNames = { run, machine: machine.name, tester: person.name };
 
@@ -39,12 +50,20 @@ function summarised(row: { run: RunRow; machine: string; tester: string }): RunS
   };
 }
 
-/** The latest runs of the workshop, or of one machine; `before` is the number of a run already seen. */
-export async function listRuns(
-  tx: Tx,
-  { workshop }: Insider,
-  choice: { machine?: string | undefined; before?: number | undefined } = {},
-): Promise<RunList & { readonly nextNumber: number | null }> {
+/** The number of a run; 404 where the workshop has none with this id. */
+async function numberOf(tx: Tx, { workshop }: Insider, id: string): Promise<number> {
+  const [row] = await tx
+    .select({ number: run.number })
+    .from(run)
+    .where(and(eq(run.workshopId, workshop.id), eq(run.id, idFrom(id))));
+  if (!row) throw notFound();
+  return row.number;
+}
+
+/** The latest runs of the workshop, or of one machine, by their numbers. */
+export async function listRuns(tx: Tx, who: Insider, query: RunQuery = {}): Promise<RunList> {
+  const { machine: machineId, limit = MOST_LISTED } = query;
+  const before = query.before === undefined ? undefined : await numberOf(tx, who, query.before);
   const rows = await tx
     .select(runWithNames)
     .from(run)
@@ -52,16 +71,15 @@ export async function listRuns(
     .innerJoin(person, eq(person.id, run.testerId))
     .where(
       and(
-        eq(run.workshopId, workshop.id),
-        choice.machine === undefined ? undefined : eq(run.machineId, idFrom(choice.machine)),
-        choice.before === undefined ? undefined : lt(run.number, choice.before),
+        eq(run.workshopId, who.workshop.id),
+        machineId === undefined ? undefined : eq(run.machineId, idFrom(machineId)),
+        before === undefined ? undefined : lt(run.number, before),
       ),
     )
     .orderBy(desc(run.number))
-    .limit(PAGE + 1);
-  const shown = rows.slice(0, PAGE);
-  const last = rows.length > PAGE ? shown.at(-1) : undefined;
-  return { runs: shown.map(summarised), next: last?.run.id ?? null, nextNumber: last?.run.number ?? null };
+    .limit(limit + 1);
+  const shown = rows.slice(0, limit);
+  return { runs: shown.map(summarised), next: rows.length > limit ? (shown.at(-1)?.run.id ?? null) : null };
 }
 
 /** One run in a line. */
@@ -100,7 +118,7 @@ export function storedReading(row: Pick<ReadingRow, 'result' | 'counter'>): Read
 }
 
 function storedMoment(row: StepRow): RunMoment | null {
-  return row.at && row.atOffset !== null ? { instant: row.at.toISOString(), offsetMinutes: row.atOffset } : null;
+  return row.instant !== null && row.atOffset !== null ? { instant: row.instant, offsetMinutes: row.atOffset } : null;
 }
 
 /** Readings of a step from the first to the one that stands: each replaces the one before. */
@@ -138,10 +156,16 @@ function shownEntry(row: StepRow, readings: readonly ReadingRow[], names: Names)
   };
 }
 
+/**
+ * When a step was done, spelled by the database: the driver hands its texts to the platform's date parser, which takes
+ * the years below 100 for others.
+ */
+const instantText = sql<string | null>`to_char(${runStep.at} at time zone 'UTC', 'YYYY-MM-DD"T"HH24:MI:SS.MS"Z"')`;
+
 /** Steps of a run in their order with all that became of them: three queries, however long the run is. */
 export async function entriesOf(tx: Tx, workshopId: string, runId: string): Promise<RunEntry[]> {
   const steps = await tx
-    .select()
+    .select({ ...getTableColumns(runStep), instant: instantText.as('instant') })
     .from(runStep)
     .where(and(eq(runStep.workshopId, workshopId), eq(runStep.runId, runId)))
     .orderBy(asc(runStep.seq));

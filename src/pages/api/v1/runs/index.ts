@@ -1,20 +1,16 @@
 import { paths } from '@/lib/paths';
-import { newRunSchema } from '@/lib/schemas/run-shapes';
+import { newRunSchema, runQuerySchema } from '@/lib/schemas/run-shapes';
 import { requireMember } from '@/lib/server/auth/guard';
-import { endpoint, json, readJson, refuseInput } from '@/lib/server/http';
+import { badInputs, endpoint, json, readJson, refuseInput } from '@/lib/server/http';
 import { startRun } from '@/lib/server/store/run-log';
 import { getRun, listRuns } from '@/lib/server/store/runs';
 
-/** The latest runs; `machine` chooses one machine's, `before` goes on behind a run's number. */
+/** The latest runs; `machine` chooses one machine's, `before` goes on with the `next` of the answer before. */
 export const GET = endpoint(async ({ locals, url }) => {
   const member = requireMember(locals, 'workshop:read');
-  const before = url.searchParams.get('before');
-  if (before !== null && !/^\d{1,9}$/u.test(before))
-    refuseInput([{ pointer: '/before', detail: 'Give the number of a run.' }]);
-  const machine = url.searchParams.get('machine') ?? undefined;
-  const choice = { machine, before: before === null ? undefined : Number(before) };
-  const { runs, nextNumber } = await member.inside((tx) => listRuns(tx, member, choice));
-  return json({ runs, next: nextNumber });
+  const query = runQuerySchema.safeParse(Object.fromEntries(url.searchParams));
+  if (!query.success) refuseInput(query.error.issues.flatMap(badInputs));
+  return json(await member.inside((tx) => listRuns(tx, member, query.data)));
 });
 
 export const POST = endpoint(async ({ locals, request }) => {

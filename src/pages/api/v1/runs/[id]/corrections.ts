@@ -1,7 +1,7 @@
 import { correctionSchema } from '@/lib/schemas/run-shapes';
 import { requireMember } from '@/lib/server/auth/guard';
 import { endpoint, json, readJson } from '@/lib/server/http';
-import { correctReading } from '@/lib/server/store/run-log';
+import { correctReading } from '@/lib/server/store/run-readings';
 
 export const POST = endpoint(async ({ locals, params, request }) => {
   const member = requireMember(locals, 'run:log');

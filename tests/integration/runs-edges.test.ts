@@ -2,8 +2,17 @@ import { newPerson, newWorkshop, startApp, type TestApp, type TestPerson } from 
 import { v7 } from 'uuid';
 import { beforeAll, describe, expect, it } from 'vitest';
 import type { Step } from '@/lib/mechanism/steps';
-import type { CheckedFile } from '@/lib/schemas/import-shapes';
-import type { Logged, RunList, RunShown, RunSummary } from '@/lib/schemas/run-shapes';
+import { type CheckedFile, checkedFileSchema } from '@/lib/schemas/import-shapes';
+import {
+  type Logged,
+  loggedSchema,
+  type RunList,
+  type RunShown,
+  type RunSummary,
+  runListSchema,
+  runSchema,
+  runSummarySchema,
+} from '@/lib/schemas/run-shapes';
 
 let app: TestApp;
 let lead: TestPerson;
@@ -187,6 +196,37 @@ describe('the list of runs', () => {
     for (const bad of ['limit=0', 'limit=x', 'before=12'])
       expect((await tester.visitor.get(`/api/v1/runs?${bad}`)).status).toBe(400);
     expect((await tester.visitor.get(`/api/v1/runs?before=${v7()}`)).status).toBe(404);
+  });
+});
+
+describe('an answer', () => {
+  it('is what the published schemas say, field by field', async () => {
+    const machine = await newMachine('As published');
+    const text = 'do,way,result,time,note\r\nturn,add,7,2026-03-01T09:15:00+01:00,stiff\r\n';
+    const query = { machine, name: 'published.csv' };
+    const checked: unknown = await (await sendFile('/api/v1/imports/check', text, query)).json();
+    expect(checkedFileSchema.parse(checked)).toEqual(checked);
+    const summary = await store(text, machine, 'published.csv');
+    expect(runSummarySchema.parse(summary)).toEqual(summary);
+    const run = await begin(machine, { title: 'Published', start: { result: '5' } });
+    const entry = {
+      id: v7(),
+      step: { ...TURN, read: { result: '5~' } },
+      at: { instant: '2026-03-01T08:15:00Z', offsetMinutes: 60 },
+    };
+    const added: unknown = await (await append(run, 1, [entry])).json();
+    expect(loggedSchema.parse(added)).toEqual(added);
+    const corrected = { seq: 1, reading: { result: '5', counter: '1' }, reason: 'Looked again.' };
+    const put: unknown = await (await correct(run, corrected)).json();
+    expect(loggedSchema.parse(put)).toEqual(put);
+    await append(run, 2, [{ id: v7(), step: TURN }]);
+    await tester.visitor.send('DELETE', `/api/v1/runs/${run}/steps/2`, { reason: 'One too many.' });
+    for (const id of [run, summary.id]) {
+      const whole = await shown(id);
+      expect(runSchema.parse(whole)).toEqual(whole);
+    }
+    const list: unknown = await (await tester.visitor.get('/api/v1/runs')).json();
+    expect(runListSchema.parse(list)).toEqual(list);
   });
 });
 

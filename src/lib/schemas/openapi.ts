@@ -2,9 +2,10 @@ import { createDocument } from 'zod-openapi';
 import { healthPaths, judgementPaths } from './openapi-judgement';
 import { machinePaths } from './openapi-machines';
 import type { ApiPaths } from './openapi-parts';
+import { runPaths } from './openapi-runs';
 
 /** The paths of every feature; a new one adds its own list here. */
-const FEATURES: readonly ApiPaths[] = [judgementPaths, machinePaths, healthPaths];
+const FEATURES: readonly ApiPaths[] = [judgementPaths, machinePaths, runPaths, healthPaths];
 
 /** The OpenAPI 3.1 document, made from the schemas that the routes check with. */
 export function openApiDocument(): ReturnType<typeof createDocument> {
@@ -20,6 +21,7 @@ export function openApiDocument(): ReturnType<typeof createDocument> {
     tags: [
       { name: 'Judgement', description: 'Without an account.' },
       { name: 'Machines', description: 'Machines, their layouts and the positions left out of the judgement.' },
+      { name: 'Runs', description: 'Runs, their steps and readings, and files of runs in and out.' },
       { name: 'Service' },
     ],
     security: [{ session: [] }],

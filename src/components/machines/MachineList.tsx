@@ -37,6 +37,8 @@ function useRows(rows: readonly ListRow[], view: ListView): readonly Row<ListRow
     },
     globalFilterFn: byWords,
     getColumnCanGlobalFilter: (column) => column.id === 'name',
+    // The page is ours; the table would set its own anew at every change of order, and draw without end.
+    autoResetPageIndex: false,
     getCoreRowModel: getCoreRowModel(),
     getFilteredRowModel: getFilteredRowModel(),
     getSortedRowModel: getSortedRowModel(),

@@ -35,7 +35,7 @@ describe('the settings', () => {
     const declared = [...read('astro.config.mjs').matchAll(/^\s+([A-Z_]+): envField/gm)].map(([, name]) => name);
     const examples = [...read('.env.example').matchAll(/^([A-Z_]+)=/gm)].map(([, name]) => name);
     // Read by the commands and by the build, before there is a server.
-    const outside = ['ALLOWED_HOSTS', 'DATABASE_OWNER_URL'];
+    const outside = ['ALLOWED_HOSTS', 'DATABASE_OWNER_URL', 'TRUSTED_PROXIES'];
     expect(declared.length).toBeGreaterThan(4);
     expect(examples.sort()).toEqual([...declared, ...outside].sort());
     for (const name of examples) expect(read('README.md'), name).toContain(`\`${name}\``);

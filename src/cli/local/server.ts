@@ -1,7 +1,10 @@
 import { type ChildProcess, spawn } from 'node:child_process';
+import path from 'node:path';
 import { setTimeout as sleep } from 'node:timers/promises';
 import { holdBuild, serverEntry } from './build';
 import { ROOT } from './places';
+
+const SERVE = path.join(ROOT, 'src', 'cli', 'serve.mjs');
 
 export interface ServerOptions {
   readonly build: string;
@@ -34,7 +37,7 @@ async function isHealthy(url: string): Promise<boolean> {
 export async function startServer(options: ServerOptions): Promise<RunningServer> {
   const { host, port } = options;
   let written = '';
-  const child = spawn(process.execPath, ['--enable-source-maps', serverEntry(options.build)], {
+  const child = spawn(process.execPath, ['--enable-source-maps', SERVE, serverEntry(options.build)], {
     cwd: ROOT,
     stdio: [
       'ignore',
